@@ -493,11 +493,7 @@ export function piecewise(
 }
 
 /** The element of a list of numbers at an index counted from 1. */
-export function element(
-  list: string,
-  values: readonly Rational[],
-  index: Expression,
-): Expression {
+export function element(list: string, values: readonly Rational[], index: Expression): Expression {
   if (index.kind === 'number' && Q.isInteger(index.value)) {
     const value = values[Number(index.value.numerator) - 1];
     if (value) return number(value);

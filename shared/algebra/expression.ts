@@ -291,7 +291,9 @@ function same(raw: Raw, e: Expression): boolean {
     case 'abbreviation':
       return e.kind === 'abbreviation' && raw.name === e.name && raw.definition === e.definition;
     case 'sum':
-      return e.kind === 'sum' && sameNumber(raw.constant, e.constant) && sameList(raw.terms, e.terms);
+      return (
+        e.kind === 'sum' && sameNumber(raw.constant, e.constant) && sameList(raw.terms, e.terms)
+      );
     case 'product':
       return (
         e.kind === 'product' &&

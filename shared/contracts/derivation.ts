@@ -59,7 +59,9 @@ export const derivedPropertySchema = z.object({
   contributions: z.array(contributionSchema),
   steps: z.array(derivationStepSchema),
   /** Where it diverges, what was assumed …; shown in the margin. */
-  notes: z.array(z.object({ kind: z.enum(['diverges', 'assumes']), text: z.string(), tex: z.string() })),
+  notes: z.array(
+    z.object({ kind: z.enum(['diverges', 'assumes']), text: z.string(), tex: z.string() }),
+  ),
 });
 export type DerivedProperty = z.infer<typeof derivedPropertySchema>;
 
@@ -142,7 +144,12 @@ export const derivationSchema = z.object({
   title: z.string(),
   ensemble: z.string(),
   /** `\ln Q` and its right side. */
-  lnPartitionFunction: z.object({ symbolTex: z.string(), tex: z.string(), text: z.string(), tree: z.unknown() }),
+  lnPartitionFunction: z.object({
+    symbolTex: z.string(),
+    tex: z.string(),
+    text: z.string(),
+    tree: z.unknown(),
+  }),
   variables: z.array(variableSchema),
   quantities: z.array(declaredQuantitySchema),
   /** Values in SI of all symbols that are no natural variable, for evaluation: name → value. */

@@ -9,11 +9,7 @@ import type { Rational } from '../algebra/rational.ts';
 import type { Dimension } from '../units/dimension.ts';
 import type { Span } from './diagnostic.ts';
 
-export type Ensemble =
-  | 'canonical'
-  | 'grand canonical'
-  | 'isothermal-isobaric'
-  | 'microcanonical';
+export type Ensemble = 'canonical' | 'grand canonical' | 'isothermal-isobaric' | 'microcanonical';
 
 /** The function of an ensemble: ln of it is what everything follows from. */
 export type PartitionFunctionName = 'Q' | 'Xi' | 'Delta' | 'W';
@@ -58,7 +54,8 @@ export interface NaturalConstant {
 
 /** A natural variable of ln Q: T, V, N, N_w, mu, p, an extent, a field. */
 export interface NaturalVariable {
-  readonly role: 'temperature' | 'extent' | 'number' | 'chemical potential' | 'pressure' | 'energy' | 'field';
+  readonly role:
+    'temperature' | 'extent' | 'number' | 'chemical potential' | 'pressure' | 'energy' | 'field';
   readonly name: string;
   readonly symbol: SymbolNode;
   readonly dimension: Dimension;
