@@ -134,6 +134,12 @@ export function sum(addends: readonly Expression[]): Expression {
   return intern({ kind: 'sum', constant, terms: terms.sort(compareExpressions) });
 }
 
+/** What is added up in e, its constant included; e alone where it is no sum. */
+export function addendsOf(e: Expression): readonly Expression[] {
+  if (e.kind !== 'sum') return [e];
+  return Q.isZero(e.constant) ? e.terms : [...e.terms, number(e.constant)];
+}
+
 export function add(a: Expression, b: Expression): Expression {
   return sum([a, b]);
 }

@@ -1,5 +1,5 @@
 /** Logarithms taken apart and put together. */
-import { ln, multiply, number, product, sum } from './construct.ts';
+import { addendsOf, ln, multiply, number, product, sum } from './construct.ts';
 import type { Expression } from './expression.ts';
 import * as Q from './rational.ts';
 import { isPositive } from './sign.ts';
@@ -11,7 +11,10 @@ import { isPositive } from './sign.ts';
  * positive. A power whose exponent is no even number exists only for a positive base as well.
  */
 export function expandLn(x: Expression): Expression {
-  if (x.kind === 'power' && mayLeave(x)) return multiply(x.exponent, expandLn(x.base));
+  if (x.kind === 'power' && mayLeave(x)) {
+    // N ln(V/Λ³) becomes N ln V − 3 N ln Λ: each term of ln Q stands for itself.
+    return sum(addendsOf(expandLn(x.base)).map((addend) => multiply(x.exponent, addend)));
+  }
   if (x.kind !== 'product') return ln(x);
   const apart = x.factors.filter(isPositive);
   const together = x.factors.filter((factor) => !isPositive(factor));
