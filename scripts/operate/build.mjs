@@ -1,0 +1,68 @@
+/**
+ * The two builds. The client is bundled by Vite into dist/client. The server, the worker and what
+ * they share are translated file by file by esbuild into dist/node, which mirrors the checkout, so
+ * that a path relative to a file means the same there; only the ending `.ts` becomes `.js`.
+ */
+import { copyFileSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { dirname, join, relative } from 'node:path';
+import { Fault } from './fault.mjs';
+import { ROOT } from './folder.mjs';
+import { run } from './process.mjs';
+import { filesBelow, whenChanged } from './sources.mjs';
+
+const CLIENT = 'dist/client';
+const NODE = 'dist/node';
+const NODE_SOURCES = ['server', 'worker', 'shared'];
+const CONFIGURATION = ['package-lock.json', 'tsconfig.json'];
+
+/** Relative imports, and URLs of files relative to a module, that name a TypeScript file. */
+const RELATIVE_TYPESCRIPT = /((?:from|import|import\(|new URL\()\s*["']\.{1,2}\/[^"']*)\.tsx?(["'])/g;
+
+export function buildClient() {
+  return whenChanged(
+    CLIENT,
+    ['src', 'shared', 'index.html', 'vite.config.ts', 'tailwind.config.ts', ...CONFIGURATION],
+    async () => {
+      await run(
+        process.execPath,
+        [join(ROOT, 'node_modules/vite/bin/vite.js'), 'build', '--logLevel', 'warn'],
+        {
+          cwd: ROOT,
+          env: { ...process.env, NODE_ENV: 'production' },
+          fails: (tail) => new Fault('The client could not be built.', `Vite said:\n${tail}`),
+        },
+      );
+    },
+  );
+}
+
+export function buildNode() {
+  return whenChanged(NODE, [...NODE_SOURCES, ...CONFIGURATION], async () => {
+    const { transform } = await import('esbuild');
+    const output = join(ROOT, NODE);
+    rmSync(output, { recursive: true, force: true });
+    for (const file of filesBelow(NODE_SOURCES)) {
+      const target = join(output, relative(ROOT, file));
+      mkdirSync(dirname(target), { recursive: true });
+      if (!/\.tsx?$/.test(file)) {
+        copyFileSync(file, target);
+        continue;
+      }
+      try {
+        const { code, map } = await transform(readFileSync(file, 'utf8'), {
+          loader: file.endsWith('x') ? 'tsx' : 'ts',
+          format: 'esm',
+          target: 'node20',
+          sourcemap: 'external',
+          sourcefile: file,
+        });
+        const name = target.replace(/\.tsx?$/, '.js');
+        const url = `${name.split('/').at(-1)}.map`;
+        writeFileSync(name, `${code.replace(RELATIVE_TYPESCRIPT, '$1.js$2')}//# sourceMappingURL=${url}\n`);
+        writeFileSync(`${name}.map`, map);
+      } catch (error) {
+        throw new Fault(`The file ${relative(ROOT, file)} could not be translated.`, error.message);
+      }
+    }
+  });
+}
