@@ -1,0 +1,33 @@
+/** The cache of what the server said. */
+import { QueryClient } from '@tanstack/react-query';
+import { ProblemError } from './problem.ts';
+
+/** A fault that trying again may mend: no connection, or the server is starting. */
+function isPassing(fault: unknown): boolean {
+  return fault instanceof ProblemError && (fault.status === 0 || fault.status >= 502);
+}
+
+export function createQueryClient(): QueryClient {
+  return new QueryClient({
+    defaultOptions: {
+      queries: {
+        staleTime: 15_000,
+        retry: (failures, fault) => failures < 3 && isPassing(fault),
+        retryDelay: (failures) => Math.min(4000, 500 * 2 ** failures),
+      },
+      mutations: { retry: false },
+    },
+  });
+}
+
+/** The keys under which resources are kept. */
+export const keys = {
+  session: ['session'] as const,
+  desk: ['desk'] as const,
+  group: (groupId: string) => ['group', groupId] as const,
+  notebook: (notebookId: string) => ['notebook', notebookId] as const,
+  model: (modelId: string) => ['model', modelId] as const,
+  draft: (modelId: string) => ['model', modelId, 'draft'] as const,
+  versions: (modelId: string) => ['model', modelId, 'versions'] as const,
+  version: (modelId: string, number: number) => ['model', modelId, 'version', number] as const,
+};
