@@ -140,7 +140,10 @@ export default tseslint.config(
     rules: {
       eqeqeq: 'error',
       'max-lines': ['warn', { max: 400 }],
-      'import-x/no-restricted-paths': ['error', { basePath: import.meta.dirname, zones: directions }],
+      'import-x/no-restricted-paths': [
+        'error',
+        { basePath: import.meta.dirname, zones: directions },
+      ],
       'massieu/telling-names': 'error',
     },
   },
@@ -183,7 +186,8 @@ export default tseslint.config(
         'error',
         ...IMPURE_GLOBALS.map((name) => ({
           name,
-          message: 'shared/ runs in browser, worker and Node alike, and its results are repeatable.',
+          message:
+            'shared/ runs in browser, worker and Node alike, and its results are repeatable.',
         })),
       ],
       'no-restricted-properties': [

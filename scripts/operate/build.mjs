@@ -16,7 +16,8 @@ const NODE_SOURCES = ['server', 'worker', 'shared'];
 const CONFIGURATION = ['package-lock.json', 'tsconfig.json'];
 
 /** Relative imports, and URLs of files relative to a module, that name a TypeScript file. */
-const RELATIVE_TYPESCRIPT = /((?:from|import|import\(|new URL\()\s*["']\.{1,2}\/[^"']*)\.tsx?(["'])/g;
+const RELATIVE_TYPESCRIPT =
+  /((?:from|import|import\(|new URL\()\s*["']\.{1,2}\/[^"']*)\.tsx?(["'])/g;
 
 export function buildClient() {
   return whenChanged(
@@ -58,7 +59,10 @@ export function buildNode() {
         });
         const name = target.replace(/\.tsx?$/, '.js');
         const url = `${name.split('/').at(-1)}.map`;
-        writeFileSync(name, `${code.replace(RELATIVE_TYPESCRIPT, '$1.js$2')}//# sourceMappingURL=${url}\n`);
+        writeFileSync(
+          name,
+          `${code.replace(RELATIVE_TYPESCRIPT, '$1.js$2')}//# sourceMappingURL=${url}\n`,
+        );
         writeFileSync(`${name}.map`, map);
       } catch (error) {
         throw new Fault(`The file ${relative(ROOT, file)} could not be translated.`, error.message);

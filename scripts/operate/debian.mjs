@@ -56,7 +56,8 @@ export async function installDebian(packages, instead) {
       foreground: means.foreground,
       stdio: [means.foreground ? 'inherit' : 'ignore', 'pipe', 'pipe'],
       onLine: (line) => progress(line.slice(0, 60)),
-      fails: (tail) => new Fault(`apt-get could not install ${list}.`, `It said:\n${tail}\n${byHand}`),
+      fails: (tail) =>
+        new Fault(`apt-get could not install ${list}.`, `It said:\n${tail}\n${byHand}`),
     });
   };
   if (means.foreground) say(`  Installing ${list} needs root: sudo may ask for your password.`);

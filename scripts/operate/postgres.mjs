@@ -2,7 +2,16 @@
  * A PostgreSQL of our own: a cluster in a folder, on a free port of loopback, without a Unix
  * socket, with a generated password, run as an unprivileged user.
  */
-import { closeSync, existsSync, openSync, readdirSync, readFileSync, readlinkSync, renameSync, rmSync } from 'node:fs';
+import {
+  closeSync,
+  existsSync,
+  openSync,
+  readdirSync,
+  readFileSync,
+  readlinkSync,
+  renameSync,
+  rmSync,
+} from 'node:fs';
 import { dirname, join } from 'node:path';
 import { which } from './debian.mjs';
 import { Fault } from './fault.mjs';
@@ -28,7 +37,9 @@ export function postgresPrograms(version) {
     const onPath = which('initdb');
     if (onPath !== undefined) folders.push(dirname(onPath));
   }
-  return folders.find((folder) => ['initdb', 'postgres'].every((name) => existsSync(join(folder, name))));
+  return folders.find((folder) =>
+    ['initdb', 'postgres'].every((name) => existsSync(join(folder, name))),
+  );
 }
 
 /** Make the cluster beside its place and move it there whole, so that half a cluster never stands. */
@@ -53,8 +64,7 @@ async function createCluster(programs, cluster, user, password, durable) {
       {
         user,
         cwd: dirname(cluster),
-        fails: (tail) =>
-          new Fault('PostgreSQL could not create its cluster.', `It said:\n${tail}`),
+        fails: (tail) => new Fault('PostgreSQL could not create its cluster.', `It said:\n${tail}`),
       },
     );
     renameSync(beside, cluster);
@@ -156,7 +166,11 @@ export async function startPostgres({ folder, user, password, durable, port: pre
   };
   const child = start(
     join(programs, 'postgres'),
-    ['-D', cluster, ...Object.entries(settings).flatMap(([name, value]) => ['-c', `${name}=${value}`])],
+    [
+      '-D',
+      cluster,
+      ...Object.entries(settings).flatMap(([name, value]) => ['-c', `${name}=${value}`]),
+    ],
     { user, cwd: folder, stdio: ['ignore', log, log], deathSignal: 'INT' },
   );
   closeSync(log);
@@ -182,7 +196,9 @@ export async function startPostgres({ folder, user, password, durable, port: pre
   }
   const client = await connect(address('postgres'));
   try {
-    const { rowCount } = await client.query('SELECT 1 FROM pg_database WHERE datname = $1', [DATABASE]);
+    const { rowCount } = await client.query('SELECT 1 FROM pg_database WHERE datname = $1', [
+      DATABASE,
+    ]);
     if (rowCount === 0) await client.query(`CREATE DATABASE ${DATABASE}`);
   } finally {
     await client.end();

@@ -30,7 +30,8 @@ export async function step(title, work, outcome) {
   let shown = false;
   const show = () => {
     const line = `  ${title} … ${words === '' ? '' : `${words}, `}${since(start)}`;
-    if (onTerminal) process.stdout.write(`\r\x1b[2K${line.slice(0, (process.stdout.columns ?? 80) - 1)}`);
+    if (onTerminal)
+      process.stdout.write(`\r\x1b[2K${line.slice(0, (process.stdout.columns ?? 80) - 1)}`);
     else say(line);
     shown = true;
   };

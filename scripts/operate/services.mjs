@@ -6,7 +6,14 @@ import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { installDebian, which } from './debian.mjs';
 import { Fault } from './fault.mjs';
-import { randomSecret, readJson, secrets, servicesFolder, STATE, writeSecretFile } from './folder.mjs';
+import {
+  randomSecret,
+  readJson,
+  secrets,
+  servicesFolder,
+  STATE,
+  writeSecretFile,
+} from './folder.mjs';
 import { asksDatabase, postgresPrograms, startPostgres } from './postgres.mjs';
 import { account } from './process.mjs';
 import { ping, startRedis } from './redis.mjs';
@@ -90,8 +97,7 @@ export async function lastingServices() {
   await ensurePrograms({ postgres: !DATABASE_URL, redis: !REDIS_URL });
   const users = serviceUsers();
   const secret = secrets(['databasePassword', 'redisPassword']);
-  const folder =
-    DATABASE_URL && REDIS_URL ? STATE : servicesFolder([users.postgres, users.redis]);
+  const folder = DATABASE_URL && REDIS_URL ? STATE : servicesFolder([users.postgres, users.redis]);
   const portsPath = join(STATE, 'ports.json');
   const ports = readJson(portsPath);
 

@@ -2,7 +2,15 @@
  * The application's own processes: each writes to a log file, and is started again when it dies,
  * at once the first time and with growing pauses when it keeps dying.
  */
-import { closeSync, existsSync, openSync, readFileSync, renameSync, rmSync, statSync } from 'node:fs';
+import {
+  closeSync,
+  existsSync,
+  openSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  statSync,
+} from 'node:fs';
 import { Fault } from './fault.mjs';
 import { end, isEnding, start, sweep } from './process.mjs';
 import { say } from './say.mjs';
