@@ -160,15 +160,25 @@ export function splitPower(e: Expression): { base: Expression; exponent: Express
 /**
  * The positive rational content of a sum: the greatest number that divides all its coefficients.
  * In products and powers sums stand without it, so that 2x + 2y and x + y are seen to be one base.
+ * Where a sum has logarithms, theirs alone count: 3N + 2N ln x is 2N (3/2 + ln x) to everybody.
  */
 function contentOf(e: Extract<Expression, { kind: 'sum' }>): Rational {
-  let content = Q.isZero(e.constant) ? undefined : e.constant;
-  for (const term of e.terms) {
+  const logarithmic = e.terms.filter(hasLogarithm);
+  let content: Rational | undefined;
+  for (const term of logarithmic.length > 0 ? logarithmic : e.terms) {
     const { coefficient } = splitCoefficient(term);
     content = content ? Q.contentGcd(content, coefficient) : coefficient;
   }
+  if (logarithmic.length === 0 && content && !Q.isZero(e.constant)) {
+    content = Q.contentGcd(content, e.constant);
+  }
   const found = content ?? Q.ONE;
   return Q.sign(found) < 0 ? Q.negate(found) : found;
+}
+
+function hasLogarithm(term: Expression): boolean {
+  if (term.kind === 'product') return term.factors.some(hasLogarithm);
+  return term.kind === 'call' && term.name === 'ln';
 }
 
 /** The product of any number of expressions; 1 for none. */

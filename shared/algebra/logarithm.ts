@@ -1,7 +1,18 @@
 /** Logarithms taken apart and put together. */
-import { addendsOf, ln, multiply, number, product, sum } from './construct.ts';
+import {
+  addendsOf,
+  ln,
+  multiply,
+  number,
+  power,
+  product,
+  splitCoefficient,
+  sum,
+} from './construct.ts';
+import { readingCost } from './cost.ts';
 import type { Expression } from './expression.ts';
 import * as Q from './rational.ts';
+import type { Rational } from './rational.ts';
 import { isPositive } from './sign.ts';
 
 /**
@@ -32,7 +43,7 @@ export function expandLn(x: Expression): Expression {
 }
 
 /** ln(3/2) stays one logarithm of a number; ln(1/2) is −ln 2. */
-function expandLnOfNumber(r: Q.Rational): Expression {
+function expandLnOfNumber(r: Rational): Expression {
   if (r.numerator === 1n) {
     return multiply(number(Q.MINUS_ONE), ln(number(Q.rational(r.denominator))));
   }
@@ -48,4 +59,68 @@ function mayLeave(x: Extract<Expression, { kind: 'power' }>): boolean {
     !Q.isInteger(exponent.value) ||
     exponent.value.numerator % 2n !== 0n
   );
+}
+
+/**
+ * A sum with its logarithms put together, N ln V − 3 N ln Λ to N ln(V/Λ³), where that reads shorter.
+ * Each argument is positive on its own where the sum has a value, so the value stays the same.
+ */
+export function gatherLogarithms(e: Expression): Expression {
+  if (e.kind !== 'sum') return e;
+  const groups = new Map<Expression, { argument: Expression; coefficient: Rational }[]>();
+  const others: Expression[] = [];
+  for (const addend of addendsOf(e)) {
+    const found = splitLogarithm(addend);
+    if (!found) {
+      others.push(addend);
+      continue;
+    }
+    const group = groups.get(found.cofactor);
+    if (group) group.push(found);
+    else groups.set(found.cofactor, [found]);
+  }
+  if (groups.size === 0) return e;
+  const gathered = [...groups].map(([cofactor, group]) => shortestGathering(cofactor, group));
+  const result = sum([...others, ...gathered]);
+  return readingCost(result) < readingCost(e) ? result : e;
+}
+
+/** cofactor · coefficient · ln(argument), for a term with exactly one logarithm. */
+function splitLogarithm(
+  term: Expression,
+): { argument: Expression; coefficient: Rational; cofactor: Expression } | undefined {
+  const { coefficient, rest } = splitCoefficient(term);
+  const factors = rest.kind === 'product' ? rest.factors : [rest];
+  const logarithms = factors.filter((factor) => factor.kind === 'call' && factor.name === 'ln');
+  const [logarithm] = logarithms;
+  if (logarithms.length !== 1 || logarithm?.kind !== 'call') return undefined;
+  const [argument] = logarithm.arguments;
+  if (!argument) return undefined;
+  const cofactor = product(factors.filter((factor) => factor !== logarithm));
+  return { argument, coefficient, cofactor };
+}
+
+function shortestGathering(
+  cofactor: Expression,
+  group: readonly { argument: Expression; coefficient: Rational }[],
+): Expression {
+  const magnitudes = group.map(({ coefficient }) =>
+    Q.sign(coefficient) < 0 ? Q.negate(coefficient) : coefficient,
+  );
+  const outside = [magnitudes.reduce((a, b) => Q.contentGcd(a, b)), ...magnitudes];
+  let best = sum(
+    group.map(({ argument, coefficient }) => product([number(coefficient), cofactor, ln(argument)])),
+  );
+  for (const magnitude of outside) {
+    for (const scale of [magnitude, Q.negate(magnitude)]) {
+      const argument = product(
+        group.map((member) =>
+          power(member.argument, number(Q.divide(member.coefficient, scale))),
+        ),
+      );
+      const candidate = product([number(scale), cofactor, ln(argument)]);
+      if (readingCost(candidate) < readingCost(best)) best = candidate;
+    }
+  }
+  return best;
 }
