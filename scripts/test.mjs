@@ -70,8 +70,7 @@ async function check({ title, program, parameters }) {
     await step(title, () =>
       run(process.execPath, [join(ROOT, 'node_modules', program), ...parameters], {
         cwd: ROOT,
-        onLine: undefined,
-        fails: (tail) => new Fault(title, tail),
+        fails: (_, output) => new Fault(title, output.trimEnd()),
       }),
     );
     return { passed: 1, failed: 0, skipped: 0 };

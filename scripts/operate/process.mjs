@@ -90,7 +90,7 @@ export function start(command, parameters, options = {}) {
  * @param {string} command
  * @param {string[]} parameters
  * @param {Parameters<typeof start>[2] & {
- *   onLine?: (line: string) => void, fails?: (tail: string) => Fault }} [options]
+ *   onLine?: (line: string) => void, fails?: (tail: string, output: string) => Fault }} [options]
  * @returns {Promise<string>}
  */
 export function run(command, parameters, options = {}) {
@@ -110,7 +110,7 @@ export function run(command, parameters, options = {}) {
       if (code === 0) return resolve(output);
       const tail = output.trimEnd().split('\n').slice(-TAIL_LINES).join('\n');
       reject(
-        options.fails?.(tail) ??
+        options.fails?.(tail, output) ??
           new Fault(`${command} ended with ${signal ?? `status ${code}`}.`, tail),
       );
     });
