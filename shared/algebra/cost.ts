@@ -13,6 +13,7 @@ const OPERATOR = 3;
 const JUXTAPOSED = 1;
 const PARENTHESES = 2;
 const FRACTION = 1;
+const NESTED_FRACTION = 12;
 
 const known = new WeakMap<Expression, number>();
 
@@ -104,7 +105,8 @@ function quotientCost(e: Extract<Expression, { kind: 'product' | 'power' }>): nu
     const isWrapped = base.kind === 'sum' || base.kind === 'product' || base.kind === 'power';
     const cost = readingCost(base) + magnitude + (isWrapped ? PARENTHESES : 0);
     if (isBelow) {
-      below += cost + JUXTAPOSED;
+      // A fraction within a denominator is hard to read, whatever it saves.
+      below += cost + JUXTAPOSED + (base.kind === 'sum' && hasFraction(base) ? NESTED_FRACTION : 0);
       countBelow++;
     } else {
       above += cost + JUXTAPOSED;
@@ -121,6 +123,16 @@ function quotientCost(e: Extract<Expression, { kind: 'product' | 'power' }>): nu
   let cost = above - JUXTAPOSED + roots;
   if (countBelow > 0) cost += FRACTION + below - JUXTAPOSED + (countBelow > 1 ? PARENTHESES : 0);
   return cost;
+}
+
+function hasFraction(e: Extract<Expression, { kind: 'sum' }>): boolean {
+  return e.terms.some((term) => {
+    const factors = term.kind === 'product' ? term.factors : [term];
+    return factors.some((factor) => {
+      const { exponent } = splitPower(factor);
+      return exponent.kind === 'number' && Q.sign(exponent.value) < 0;
+    });
+  });
 }
 
 function exponentCost(exponent: Rational): number {

@@ -158,7 +158,7 @@ export class Workspace {
       case 'product': {
         let result = factoredNumber(e.coefficient);
         for (const factor of e.factors) result = multiplyFactored(result, this.factored(factor));
-        return result;
+        return this.cancel(result);
       }
       case 'sum':
         return this.add(addendsOf(e).map((addend) => this.factored(addend)));
@@ -372,8 +372,9 @@ export class Workspace {
     let result = factoredNumber(Q.rational(content));
     const isWhole = factors.length === 1 && factors[0]?.exponent === 1;
     for (const { base, exponent } of factors) {
-      const power = this.polynomialFactor(base, isWhole ? scaleHint(hint, content) : undefined);
-      result = multiplyFactored(result, raiseFactored(power, Q.rational(exponent)));
+      const offered = isWhole && hint !== zero ? scaleHint(hint, content) : undefined;
+      const factor = this.polynomialFactor(base, offered);
+      result = multiplyFactored(result, raiseFactored(factor, Q.rational(exponent)));
     }
     return result;
   }
@@ -404,8 +405,84 @@ export class Workspace {
     const expression = gatherLogarithms(this.writePolynomial(polynomial));
     const index = this.bases.push({ kind: 'polynomial', polynomial, expression }) - 1;
     this.polynomialNumber.set(P.toKey(polynomial), index);
-    this.offerWriting(index, hint);
+    if (this.options.mode === 'display') {
+      this.offerWriting(index, hint);
+      for (const writing of this.writingsByBases(polynomial)) this.offerWriting(index, writing);
+    }
     return index;
+  }
+
+  /**
+   * A polynomial by powers of bases met before: 2a V² − 4a b N V + 2a b² N² − b k T V² is
+   * 2a (V − N b)² − b k T V². One step of division at each end of the known base, tried for the
+   * higher powers first.
+   */
+  private *writingsByBases(polynomial: Polynomial): Generator<Expression> {
+    const size = P.termCount(polynomial);
+    if (size < 4 || size > 60) return;
+    const variables = new Set(P.variablesOf(polynomial));
+    for (const base of this.bases) {
+      if (base.kind !== 'polynomial' || base.polynomial === polynomial) continue;
+      const terms = P.termCount(base.polynomial);
+      if (terms > 3 || !P.variablesOf(base.polynomial).every((v) => variables.has(v))) continue;
+      for (let n = 4; n >= 1; n--) {
+        const raised = P.power(base.polynomial, n);
+        const all = [...P.termsOf(raised)];
+        for (const pivot of [all[0], all[all.length - 1]]) {
+          if (!pivot) continue;
+          const quotient = divideTermwise(polynomial, pivot);
+          const taken = P.termCount(quotient);
+          if (taken === 0 || taken > 3) continue;
+          const rest = P.add(polynomial, P.negate(P.multiply(quotient, raised)));
+          if (taken + P.termCount(rest) >= size) continue;
+          yield add(
+            multiply(this.writePolynomial(quotient), power(base.expression, integer(n))),
+            this.writePolynomial(rest),
+          );
+        }
+      }
+    }
+  }
+
+  /** Takes common factors out of numerator and denominator that the bases do not show. */
+  private cancel(f: Factored): Factored {
+    const above: number[] = [];
+    const below: number[] = [];
+    for (const [index, exponent] of f.exponents) {
+      if (this.baseAt(index).kind !== 'polynomial') continue;
+      (Q.sign(exponent) > 0 ? above : below).push(index);
+    }
+    for (const i of above) {
+      for (const j of below) {
+        const numerator = this.baseAt(i);
+        const denominator = this.baseAt(j);
+        if (numerator.kind !== 'polynomial' || denominator.kind !== 'polynomial') continue;
+        const divisor = P.greatestCommonDivisor(numerator.polynomial, denominator.polynomial);
+        if (P.termCount(divisor) < 2) continue;
+        let result = f;
+        for (const index of [i, j]) {
+          const exponent = f.exponents.get(index) ?? Q.ZERO;
+          result = multiplyFactored(
+            withoutExponents(result, new Map([[index, exponent]])),
+            raiseFactored(this.split(index, divisor), exponent),
+          );
+        }
+        return this.cancel(result);
+      }
+    }
+    return f;
+  }
+
+  /** A base as the product of a divisor and what is left. */
+  private split(index: number, divisor: Polynomial): Factored {
+    const base = this.baseAt(index);
+    if (base.kind !== 'polynomial') return factoredBase(index);
+    const rest = P.divideExact(base.polynomial, divisor);
+    if (!rest) return factoredBase(index);
+    return multiplyFactored(
+      this.factorPolynomial(divisor, zero),
+      this.factorPolynomial(rest, zero),
+    );
   }
 
   /** Keeps the shorter of the known and the offered way to write a polynomial base. */
@@ -611,6 +688,31 @@ export class Workspace {
       }
     }
   }
+}
+
+/** Σ of those terms of p that the monomial divides exactly, each divided by it. */
+function divideTermwise(
+  p: Polynomial,
+  by: { coefficient: bigint; exponents: readonly (readonly [number, number])[] },
+): Polynomial {
+  let result = P.zero;
+  for (const { coefficient, exponents } of P.termsOf(p)) {
+    if (coefficient % by.coefficient !== 0n) continue;
+    const left = new Map(exponents);
+    let divides = true;
+    for (const [variable, exponent] of by.exponents) {
+      const remaining = (left.get(variable) ?? 0) - exponent;
+      if (remaining < 0) divides = false;
+      left.set(variable, remaining);
+    }
+    if (!divides) continue;
+    let term = P.constant(coefficient / by.coefficient);
+    for (const [variable, exponent] of left) {
+      term = P.multiply(term, P.power(P.variable(variable), exponent));
+    }
+    result = P.add(result, term);
+  }
+  return result;
 }
 
 function exponentOf(e: Expression): Rational {
