@@ -14,6 +14,8 @@ const JUXTAPOSED = 1;
 const PARENTHESES = 2;
 const FRACTION = 1;
 const NESTED_FRACTION = 12;
+/** + ln(V/(N Λ³)) is preferred to − ln(N Λ³/V), though it may be written with more parentheses. */
+const MINUS_LOGARITHM_OF_FRACTION = 5;
 
 const known = new WeakMap<Expression, number>();
 
@@ -121,18 +123,27 @@ function quotientCost(e: Extract<Expression, { kind: 'product' | 'power' }>): nu
     countBelow++;
   }
   let cost = above - JUXTAPOSED + roots;
+  if (Q.sign(coefficient) < 0 && factors.some(isLogarithmOfFraction)) {
+    cost += MINUS_LOGARITHM_OF_FRACTION;
+  }
   if (countBelow > 0) cost += FRACTION + below - JUXTAPOSED + (countBelow > 1 ? PARENTHESES : 0);
   return cost;
 }
 
 function hasFraction(e: Extract<Expression, { kind: 'sum' }>): boolean {
-  return e.terms.some((term) => {
-    const factors = term.kind === 'product' ? term.factors : [term];
-    return factors.some((factor) => {
-      const { exponent } = splitPower(factor);
-      return exponent.kind === 'number' && Q.sign(exponent.value) < 0;
-    });
+  return e.terms.some(isFraction);
+}
+
+function isFraction(e: Expression): boolean {
+  const factors = e.kind === 'product' ? e.factors : [e];
+  return factors.some((factor) => {
+    const { exponent } = splitPower(factor);
+    return exponent.kind === 'number' && Q.sign(exponent.value) < 0;
   });
+}
+
+function isLogarithmOfFraction(e: Expression): boolean {
+  return e.kind === 'call' && e.name === 'ln' && e.arguments.some(isFraction);
 }
 
 function exponentCost(exponent: Rational): number {

@@ -100,9 +100,6 @@ function splitLogarithm(
   return { argument, coefficient, cofactor };
 }
 
-/** + ln(V/(N Λ³)) is preferred to − ln(N Λ³/V), though it may be written with more parentheses. */
-const PREFERENCE_FOR_PLUS = 5;
-
 function shortestGathering(
   cofactor: Expression,
   group: readonly { argument: Expression; coefficient: Rational }[],
@@ -114,7 +111,6 @@ function shortestGathering(
   let best = sum(
     group.map(({ argument, coefficient }) => product([number(coefficient), cofactor, ln(argument)])),
   );
-  let lowest = readingCost(best);
   for (const magnitude of outside) {
     for (const scale of [magnitude, Q.negate(magnitude)]) {
       const argument = product(
@@ -123,11 +119,7 @@ function shortestGathering(
         ),
       );
       const candidate = product([number(scale), cofactor, ln(argument)]);
-      const cost = readingCost(candidate) + (Q.sign(scale) < 0 ? PREFERENCE_FOR_PLUS : 0);
-      if (cost < lowest) {
-        best = candidate;
-        lowest = cost;
-      }
+      if (readingCost(candidate) < readingCost(best)) best = candidate;
     }
   }
   return best;
