@@ -40,7 +40,9 @@ function numberCost(r: Rational): number {
 function nameCost(name: string): number {
   const [head = '', subscript] = name.split('_');
   // A Greek letter is spelt with many characters but read as one.
-  return Math.min(head.length, 2) + (subscript === undefined ? 0 : Math.min(subscript.length, 2) / 2);
+  return (
+    Math.min(head.length, 2) + (subscript === undefined ? 0 : Math.min(subscript.length, 2) / 2)
+  );
 }
 
 function estimate(e: Expression): number {
@@ -55,7 +57,9 @@ function estimate(e: Expression): number {
     case 'sum': {
       let cost = Q.isZero(e.constant) ? -OPERATOR : numberCost(e.constant);
       for (const term of e.terms) cost += OPERATOR + termCost(term);
-      return cost;
+      // A sum without a positive term starts with a minus sign.
+      const startsWithMinus = Q.sign(e.constant) <= 0 && e.terms.every(isNegated);
+      return startsWithMinus ? cost + 1 : cost;
     }
     case 'product':
     case 'power':
@@ -73,7 +77,11 @@ function estimate(e: Expression): number {
     case 'piecewise':
       return e.branches.reduce(
         (cost, { condition, value }) =>
-          cost + 4 + readingCost(condition.left) + readingCost(condition.right) + readingCost(value),
+          cost +
+          4 +
+          readingCost(condition.left) +
+          readingCost(condition.right) +
+          readingCost(value),
         4 + readingCost(e.otherwise),
       );
     case 'element':
@@ -84,7 +92,11 @@ function estimate(e: Expression): number {
 /** A term of a sum: its minus sign is the operator that the sum has counted already. */
 function termCost(term: Expression): number {
   const cost = readingCost(term);
-  return term.kind === 'product' && Q.sign(term.coefficient) < 0 ? cost - 1 : cost;
+  return isNegated(term) ? cost - 1 : cost;
+}
+
+function isNegated(term: Expression): boolean {
+  return term.kind === 'product' && Q.sign(term.coefficient) < 0;
 }
 
 function quotientCost(e: Extract<Expression, { kind: 'product' | 'power' }>): number {
@@ -116,7 +128,8 @@ function quotientCost(e: Extract<Expression, { kind: 'product' | 'power' }>): nu
     }
   }
   const isUnit = coefficient.numerator === 1n || coefficient.numerator === -1n;
-  if (!isUnit || countAbove === 0) above += numberCost(Q.rational(coefficient.numerator)) + JUXTAPOSED;
+  if (!isUnit || countAbove === 0)
+    above += numberCost(Q.rational(coefficient.numerator)) + JUXTAPOSED;
   else if (coefficient.numerator < 0n) above += 1;
   if (coefficient.denominator !== 1n) {
     below += numberCost(Q.rational(coefficient.denominator)) + JUXTAPOSED;

@@ -78,7 +78,9 @@ function derive(e: Expression, x: SymbolNode): Expression {
       return callDerivative(e, x);
     case 'summation':
       if (dependsOn(e.from, x) || dependsOn(e.to, x)) {
-        throw new NotDifferentiable(`the ends of a sum over ${e.variable.name} vary with ${x.name}`);
+        throw new NotDifferentiable(
+          `the ends of a sum over ${e.variable.name} vary with ${x.name}`,
+        );
       }
       return summation(e.variable, e.from, e.to, differentiate(e.body, x));
     case 'productOver':
@@ -87,10 +89,7 @@ function derive(e: Expression, x: SymbolNode): Expression {
           `the ends of a product over ${e.variable.name} vary with ${x.name}`,
         );
       }
-      return multiply(
-        e,
-        summation(e.variable, e.from, e.to, logarithmicDerivative(e.body, x)),
-      );
+      return multiply(e, summation(e.variable, e.from, e.to, logarithmicDerivative(e.body, x)));
     case 'integral':
       // Leibniz's rule: under the sign, and the integrand at each end that moves.
       return sum([
@@ -230,10 +229,7 @@ function callDerivative(e: CallNode, x: SymbolNode): Expression {
     case 'debye':
       // D_n(x) = n/x^n ∫_0^x t^n/(e^t − 1) dt, so D_n' = n/(e^x − 1) − n D_n/x.
       if (!v || dependsOn(u, x)) throw new NotDifferentiable('debye by its order');
-      return chain(
-        multiply(u, subtract(power(subtract(exp(v), one), minusOne), divide(e, v))),
-        v,
-      );
+      return chain(multiply(u, subtract(power(subtract(exp(v), one), minusOne), divide(e, v))), v);
     case 'abs':
       return chain(subtract(multiply(two, call('heaviside', [u])), one));
     case 'heaviside':
@@ -334,4 +330,3 @@ export function differentiateTimes(e: Expression, x: SymbolNode, n: number): Exp
   for (let i = 0; i < n; i++) result = differentiate(result, x);
   return result;
 }
-

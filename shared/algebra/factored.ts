@@ -82,10 +82,7 @@ export function commonExponents(terms: readonly Factored[]): ReadonlyMap<number,
 }
 
 /** a divided by Π base^exponent. */
-export function withoutExponents(
-  a: Factored,
-  taken: ReadonlyMap<number, Rational>,
-): Factored {
+export function withoutExponents(a: Factored, taken: ReadonlyMap<number, Rational>): Factored {
   if (taken.size === 0) return a;
   const exponents = new Map(a.exponents);
   for (const [base, exponent] of taken) {

@@ -1,5 +1,16 @@
 /** Limits by expansion about the point. */
-import { add, divide, infinity, negate, number, one, power, subtract, symbol, zero } from './construct.ts';
+import {
+  add,
+  divide,
+  infinity,
+  negate,
+  number,
+  one,
+  power,
+  subtract,
+  symbol,
+  zero,
+} from './construct.ts';
 import { childrenOf, type Expression, type SymbolNode } from './expression.ts';
 import * as Q from './rational.ts';
 import { isExactZero, seriesIn } from './series.ts';
@@ -14,11 +25,7 @@ const MOST_TERMS = 12;
  * The limit of e as the symbol x tends to a value (from above) or to ±∞; ±∞ itself where e grows
  * with a sign that is known; undefined where it cannot be told.
  */
-export function limitAt(
-  e: Expression,
-  x: SymbolNode,
-  towards: Expression,
-): Expression | undefined {
+export function limitAt(e: Expression, x: SymbolNode, towards: Expression): Expression | undefined {
   const expanded = expandAbbreviations(e);
   if (!dependsOn(expanded, x)) return simplify(expanded);
   const t = symbol('small quantity', { positive: true });

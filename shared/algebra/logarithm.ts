@@ -109,14 +109,14 @@ function shortestGathering(
   );
   const outside = [magnitudes.reduce((a, b) => Q.contentGcd(a, b)), ...magnitudes];
   let best = sum(
-    group.map(({ argument, coefficient }) => product([number(coefficient), cofactor, ln(argument)])),
+    group.map(({ argument, coefficient }) =>
+      product([number(coefficient), cofactor, ln(argument)]),
+    ),
   );
   for (const magnitude of outside) {
     for (const scale of [magnitude, Q.negate(magnitude)]) {
       const argument = product(
-        group.map((member) =>
-          power(member.argument, number(Q.divide(member.coefficient, scale))),
-        ),
+        group.map((member) => power(member.argument, number(Q.divide(member.coefficient, scale)))),
       );
       const candidate = product([number(scale), cofactor, ln(argument)]);
       if (readingCost(candidate) < readingCost(best)) best = candidate;

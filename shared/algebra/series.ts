@@ -127,12 +127,7 @@ function expandIn(e: Expression, t: SymbolNode, count: number): Series {
 }
 
 /** (c t^k (1 + v))^r = c^r t^(kr) Σ C(r, n) v^n, for a constant exponent r. */
-function powerSeries(
-  base: Expression,
-  exponent: Expression,
-  t: SymbolNode,
-  count: number,
-): Series {
+function powerSeries(base: Expression, exponent: Expression, t: SymbolNode, count: number): Series {
   if (dependsOn(exponent, t)) {
     return expandIn(call('exp', [multiply(exponent, callLn(base))]), t, count);
   }
@@ -185,7 +180,11 @@ function compose(weights: readonly Expression[], v: Series): Series {
   return { start: 0, coefficients: result };
 }
 
-function callSeries(e: Extract<Expression, { kind: 'call' }>, t: SymbolNode, count: number): Series {
+function callSeries(
+  e: Extract<Expression, { kind: 'call' }>,
+  t: SymbolNode,
+  count: number,
+): Series {
   const varying = e.arguments.filter((argument) => dependsOn(argument, t));
   const [u] = varying;
   if (varying.length !== 1 || !u) throw new NoSeries(e.name);
@@ -194,7 +193,9 @@ function callSeries(e: Extract<Expression, { kind: 'call' }>, t: SymbolNode, cou
     const [lead] = inner.coefficients;
     if (!lead || inner.start !== 0) throw new NoSeries('a logarithm of t');
     // ln(1 + v) = v − v²/2 + …
-    const weights = inner.coefficients.map((_, n) => (n === 0 ? zero : fraction(n % 2 ? 1 : -1, n)));
+    const weights = inner.coefficients.map((_, n) =>
+      n === 0 ? zero : fraction(n % 2 ? 1 : -1, n),
+    );
     return addSeries(
       constantSeries(ln(lead), count),
       compose(weights, relativeSeries(inner, lead)),

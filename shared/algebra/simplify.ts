@@ -60,7 +60,7 @@ export class Simplifier {
    */
   private termwise(e: Expression): Expression | undefined {
     const { workspace } = this;
-    const addends = addendsOf(distribute(e));
+    const addends = addendsOf(sum(addendsOf(distribute(e)).map(distribute)));
     if (addends.length < 2) return undefined;
     const terms: { factored: Factored; written: Expression }[] = [];
     for (const addend of addends) {
@@ -71,7 +71,8 @@ export class Simplifier {
     const asDerived = gatherLogarithms(sum(terms.map(({ written }) => written)));
     if (terms.length > MOST_PAIRED_TERMS) return asDerived;
     for (;;) {
-      let best: { i: number; j: number; merged: (typeof terms)[number]; saving: number } | undefined;
+      let best:
+        { i: number; j: number; merged: (typeof terms)[number]; saving: number } | undefined;
       for (let i = 0; i < terms.length; i++) {
         for (let j = i + 1; j < terms.length; j++) {
           const a = terms[i];
@@ -116,7 +117,9 @@ function shortest(candidates: readonly Expression[]): Expression {
 /** A product over its first sum, x (a + b) as x a + x b; anything else as it is. */
 export function distribute(e: Expression): Expression {
   if (e.kind !== 'product') return e;
-  const inner = e.factors.find((factor) => splitPower(factor).base === factor && factor.kind === 'sum');
+  const inner = e.factors.find(
+    (factor) => splitPower(factor).base === factor && factor.kind === 'sum',
+  );
   if (!inner) return e;
   const rest = product([number(e.coefficient), ...e.factors.filter((factor) => factor !== inner)]);
   return sum(addendsOf(inner).map((addend) => multiply(rest, addend)));

@@ -147,9 +147,7 @@ export function expandAbbreviations(e: Expression): Expression {
   const known = expandedKnown.get(e);
   if (known) return known;
   const result =
-    e.kind === 'abbreviation'
-      ? expandAbbreviations(e.definition)
-      : rebuild(e, expandAbbreviations);
+    e.kind === 'abbreviation' ? expandAbbreviations(e.definition) : rebuild(e, expandAbbreviations);
   expandedKnown.set(e, result);
   return result;
 }

@@ -191,6 +191,11 @@ export class Workspace {
       const replaced = asExponentials(e.name, x);
       if (replaced) return this.factored(replaced);
     }
+    // By sinh and cosh 1 − tanh² x is found to be 1/cosh² x; `otherWritings` puts tanh back.
+    if (e.name === 'tanh' || e.name === 'coth') {
+      const quotient = divide(call('sinh', [x]), call('cosh', [x]));
+      return this.factored(e.name === 'tanh' ? quotient : power(quotient, number(Q.MINUS_ONE)));
+    }
     const rebuilt = call(
       e.name,
       e.arguments.map((argument) => this.written(argument)),
@@ -346,16 +351,14 @@ export class Workspace {
     if (expandedSize > MOST_EXPANDED_TERMS) {
       if (this.options.mode === 'equality') throw new BudgetExceeded('a common denominator');
       const written = sum(terms.map((term) => this.write(term)));
-      return written.kind === 'sum'
-        ? factoredBase(this.kernel(written))
-        : this.factored(written);
+      return written.kind === 'sum' ? factoredBase(this.kernel(written)) : this.factored(written);
     }
     let polynomial = P.zero;
     for (const term of terms) {
       const scaled = Q.divide(term.coefficient, content);
       polynomial = P.add(polynomial, P.scale(this.expanded(term), scaled.numerator));
     }
-    polynomial = this.reduceRoots(polynomial);
+    polynomial = this.reduceHyperbolic(this.reduceRoots(polynomial));
     if (P.isZero(polynomial)) return FACTORED_ZERO;
     const hint = sum(
       terms.map((term) =>
@@ -500,10 +503,7 @@ export class Workspace {
       for (const [variable, exponent] of exponents) {
         const kernel = this.kernelAt(variable);
         const index = this.kernel(kernel.expression);
-        result = multiplyFactored(
-          result,
-          factoredBase(index, Q.rational(exponent, kernel.root)),
-        );
+        result = multiplyFactored(result, factoredBase(index, Q.rational(exponent, kernel.root)));
       }
       return result;
     }
@@ -587,16 +587,23 @@ export class Workspace {
       const kernel = this.kernelAt(variable);
       const value = this.valueOfRoot(kernel);
       if (!value || P.degree(result, variable) < value.order) continue;
-      const coefficients = P.coefficientsIn(result, variable);
-      result = P.zero;
-      coefficients.forEach((coefficient, exponent) => {
-        const whole = Math.floor(exponent / value.order);
-        const rest = P.power(P.variable(variable), exponent % value.order);
-        result = P.add(
-          result,
-          P.multiply(P.multiply(coefficient, rest), P.power(value.polynomial, whole)),
-        );
-      });
+      result = replacePowers(result, variable, value.order, value.polynomial);
+    }
+    return result;
+  }
+
+  /** cosh² x − sinh² x is 1: sinh² is written by cosh² where that makes fewer terms. */
+  private reduceHyperbolic(polynomial: Polynomial): Polynomial {
+    let result = polynomial;
+    for (const variable of P.variablesOf(polynomial)) {
+      const { expression } = this.kernelAt(variable);
+      if (expression.kind !== 'call' || expression.name !== 'sinh') continue;
+      if (P.degree(result, variable) < 2) continue;
+      const cosh = this.baseAt(this.kernel(call('cosh', expression.arguments)));
+      if (cosh.kind !== 'kernel') continue;
+      const square = P.add(P.power(P.variable(cosh.variable), 2), P.constant(-1n));
+      const reduced = replacePowers(result, variable, 2, square);
+      if (P.termCount(reduced) < P.termCount(result)) result = reduced;
     }
     return result;
   }
@@ -660,15 +667,36 @@ export class Workspace {
 
   /**
    * Writings that may be shorter: a minus sign taken into a difference, −(a − b) c = (b − a) c, and
-   * an exponential taken into a sum, exp(−x)/(exp(x) − 1)^(−1) as 1 − exp(−x).
+   * an exponential taken into a sum, exp(−x)/(exp(x) − 1)^(−1) as 1 − exp(−x), and sinh x/cosh x as
+   * tanh x or coth x.
    */
   private *otherWritings(f: Factored): Generator<Expression> {
+    for (const [index, exponent] of f.exponents) {
+      const { expression } = this.baseAt(index);
+      if (expression.kind !== 'call' || expression.name !== 'sinh') continue;
+      const cosh = this.kernelNumber.get(call('cosh', expression.arguments));
+      const below = cosh === undefined ? undefined : f.exponents.get(cosh);
+      if (cosh === undefined || !below || Q.sign(below) === Q.sign(exponent)) continue;
+      const exponents = new Map(f.exponents);
+      exponents.delete(index);
+      const left = Q.add(below, exponent);
+      if (Q.isZero(left)) exponents.delete(cosh);
+      else exponents.set(cosh, left);
+      const isAbove = Q.sign(exponent) > 0;
+      yield multiply(
+        power(
+          call(isAbove ? 'tanh' : 'coth', expression.arguments),
+          number(isAbove ? exponent : Q.negate(exponent)),
+        ),
+        this.writeWith({ coefficient: f.coefficient, exponents }, undefined),
+      );
+    }
     for (const [index, exponent] of f.exponents) {
       const base = this.baseAt(index);
       if (base.kind !== 'polynomial') continue;
       if (Q.sign(f.coefficient) < 0 && Q.isOne(exponent)) {
         const positive = { coefficient: Q.negate(f.coefficient), exponents: f.exponents };
-        yield this.writeWith(positive, { index, by: negate(base.expression) });
+        yield this.writeWith(positive, { index, by: gatherLogarithms(negate(base.expression)) });
       }
       for (const variable of P.variablesOf(base.polynomial)) {
         const kernel = this.kernelAt(variable);
@@ -688,6 +716,22 @@ export class Workspace {
       }
     }
   }
+}
+
+/** p with variable^order replaced by the value, as often as it goes into each power. */
+function replacePowers(
+  p: Polynomial,
+  variable: number,
+  order: number,
+  value: Polynomial,
+): Polynomial {
+  let result = P.zero;
+  P.coefficientsIn(p, variable).forEach((coefficient, exponent) => {
+    const rest = P.power(P.variable(variable), exponent % order);
+    const replaced = P.power(value, Math.floor(exponent / order));
+    result = P.add(result, P.multiply(P.multiply(coefficient, rest), replaced));
+  });
+  return result;
 }
 
 /** Σ of those terms of p that the monomial divides exactly, each divided by it. */
@@ -783,7 +827,8 @@ export function expand(e: Expression): Expression {
   const others: Expression[] = [number(e.coefficient)];
   for (const factor of e.factors) {
     const { base, exponent } = splitPower(factor);
-    const n = exponent.kind === 'number' && Q.isInteger(exponent.value) ? exponent.value.numerator : 0n;
+    const n =
+      exponent.kind === 'number' && Q.isInteger(exponent.value) ? exponent.value.numerator : 0n;
     if (base.kind === 'sum' && n > 0n && n <= 8n) {
       for (let i = 0n; i < n; i++) sums.push(base);
     } else {

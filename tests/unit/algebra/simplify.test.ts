@@ -37,10 +37,7 @@ describe('the shortest form', () => {
     const expected = C.product([
       N,
       k,
-      C.add(
-        C.fraction(5, 2),
-        C.ln(C.divide(free, C.multiply(N, C.power(Lambda, C.integer(3))))),
-      ),
+      C.add(C.fraction(5, 2), C.ln(C.divide(free, C.multiply(N, C.power(Lambda, C.integer(3)))))),
     ]);
     expect(simplifier.simplify(entropy)).toBe(expected);
   });
@@ -56,10 +53,7 @@ describe('the shortest form', () => {
       C.product([C.fraction(3, 2), N, k]),
       C.divide(
         C.product([N, k, k, T, V, V, V]),
-        C.subtract(
-          C.product([k, T, V, V, V]),
-          C.product([C.two, a, N, free, free]),
-        ),
+        C.subtract(C.product([k, T, V, V, V]), C.product([C.two, a, N, free, free])),
       ),
     );
     expect(simplifier.simplify(heatCapacity)).toBe(expected);
@@ -76,10 +70,7 @@ describe('the shortest form', () => {
   it('finds common denominators and cancels', () => {
     const x = C.symbol('x');
     const y = C.symbol('y');
-    const e = C.divide(
-      C.subtract(C.square(x), C.square(y)),
-      C.subtract(x, y),
-    );
+    const e = C.divide(C.subtract(C.square(x), C.square(y)), C.subtract(x, y));
     expect(simplify(e)).toBe(C.add(x, y));
   });
 });
@@ -88,16 +79,40 @@ describe('equality', () => {
   const x = C.symbol('x', { positive: true });
   const y = C.symbol('y', { positive: true });
   const identities: [string, Expression, Expression][] = [
-    ['a binomial', C.square(C.add(x, y)), C.sum([C.square(x), C.product([C.two, x, y]), C.square(y)])],
+    [
+      'a binomial',
+      C.square(C.add(x, y)),
+      C.sum([C.square(x), C.product([C.two, x, y]), C.square(y)]),
+    ],
     ['exponentials of sums', C.exp(C.add(x, y)), C.multiply(C.exp(x), C.exp(y))],
-    ['a hyperbolic identity', C.subtract(C.square(C.call('cosh', [x])), C.square(C.call('sinh', [x]))), C.one],
-    ['the derivative of tanh', differentiate(C.call('tanh', [x]), x), C.power(C.call('cosh', [x]), C.integer(-2))],
+    [
+      'a hyperbolic identity',
+      C.subtract(C.square(C.call('cosh', [x])), C.square(C.call('sinh', [x]))),
+      C.one,
+    ],
+    [
+      'the derivative of tanh',
+      differentiate(C.call('tanh', [x]), x),
+      C.power(C.call('cosh', [x]), C.integer(-2)),
+    ],
     ['logarithms of products', C.ln(C.multiply(x, y)), C.add(C.ln(x), C.ln(y))],
-    ['logarithms of numbers', C.ln(C.integer(12)), C.add(C.multiply(C.two, C.ln(C.two)), C.ln(C.integer(3)))],
+    [
+      'logarithms of numbers',
+      C.ln(C.integer(12)),
+      C.add(C.multiply(C.two, C.ln(C.two)), C.ln(C.integer(3))),
+    ],
     ['roots', C.multiply(C.sqrt(x), C.sqrt(x)), x],
-    ['roots of numbers', C.square(C.add(C.one, C.sqrt(C.two))), C.add(C.integer(3), C.multiply(C.two, C.sqrt(C.two)))],
+    [
+      'roots of numbers',
+      C.square(C.add(C.one, C.sqrt(C.two))),
+      C.add(C.integer(3), C.multiply(C.two, C.sqrt(C.two))),
+    ],
     ['roots of sums', C.subtract(C.square(C.sqrt(C.add(C.one, x))), C.one), x],
-    ['quotients', C.subtract(C.divide(C.one, x), C.divide(C.one, y)), C.divide(C.subtract(y, x), C.multiply(x, y))],
+    [
+      'quotients',
+      C.subtract(C.divide(C.one, x), C.divide(C.one, y)),
+      C.divide(C.subtract(y, x), C.multiply(x, y)),
+    ],
     ['an abbreviation', C.square(C.abbreviation('s', C.add(x, y))), C.square(C.add(x, y))],
   ];
   it.each(identities)('decides %s', (_, left, right) => {
@@ -139,10 +154,7 @@ describe('limits', () => {
   it('follow exponentials that vanish', () => {
     const theta = C.symbol('Theta', { positive: true });
     const x = C.divide(theta, T);
-    const heat = C.divide(
-      C.multiply(C.square(x), C.exp(x)),
-      C.square(C.subtract(C.exp(x), C.one)),
-    );
+    const heat = C.divide(C.multiply(C.square(x), C.exp(x)), C.square(C.subtract(C.exp(x), C.one)));
     expect(limitAt(heat, T, C.infinity)).toBe(C.one);
   });
 
