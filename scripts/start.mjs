@@ -33,6 +33,7 @@ async function leave(status) {
   for (const stop of stops.reverse()) await stop().catch((error) => report(error, 'While ending'));
   await endAll();
   release();
+  if (status === 0) say('Massieu has ended.');
   process.exit(status);
 }
 
@@ -43,7 +44,7 @@ function listenForTheEnd() {
       // Children carry a parent-death signal, so that ending at once ends them too.
       if (leaving) process.exit(1);
       say('\nEnding Massieu …');
-      void leave(0).then(() => say('Massieu has ended.'));
+      void leave(0);
     });
   }
   // npm may be killed without handing the signal on.
@@ -124,7 +125,11 @@ async function main() {
   say('Starting Massieu');
   await ensurePackages();
 
-  const services = await lastingServices();
+  const services = await lastingServices((error) => {
+    if (leaving) return;
+    report(error, 'Massieu must end');
+    void leave(1);
+  });
   stops.push(services.postgres.stop, services.redis.stop);
   const ports = readJson(portsPath);
   const fakePort = await freePort(ports.fakes);

@@ -10,13 +10,17 @@ import {
   chownSync,
   existsSync,
   mkdirSync,
+  openSync,
   readFileSync,
+  renameSync,
   statSync,
   writeFileSync,
 } from 'node:fs';
 import { dirname, join, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { Fault } from './fault.mjs';
+
+const LOG_LIMIT_BYTES = 10 * 1024 * 1024;
 
 /** The checkout. */
 export const ROOT = resolve(dirname(fileURLToPath(import.meta.url)), '..', '..');
@@ -75,6 +79,12 @@ export function writeSecretFile(path, text, user = null) {
   writeFileSync(path, text, { mode: 0o600 });
   chmodSync(path, 0o600);
   if (user !== null) chownSync(path, user.uid, user.gid);
+}
+
+/** A log file opened for appending; one that has grown long is put aside as `.1`. */
+export function openLog(path) {
+  if (existsSync(path) && statSync(path).size > LOG_LIMIT_BYTES) renameSync(path, `${path}.1`);
+  return openSync(path, 'a', 0o600);
 }
 
 export function randomSecret() {

@@ -5,7 +5,6 @@
 import {
   closeSync,
   existsSync,
-  openSync,
   readdirSync,
   readFileSync,
   readlinkSync,
@@ -15,7 +14,7 @@ import {
 import { dirname, join } from 'node:path';
 import { which } from './debian.mjs';
 import { Fault } from './fault.mjs';
-import { folderOf, writeSecretFile } from './folder.mjs';
+import { folderOf, openLog, writeSecretFile } from './folder.mjs';
 import { end, isAlive, run, start } from './process.mjs';
 import { freePort } from './port.mjs';
 import { until } from './wait.mjs';
@@ -154,7 +153,7 @@ export async function startPostgres({ folder, user, password, durable, port: pre
 
   const port = await freePort(preferred);
   const logPath = join(folder, 'postgres.log');
-  const log = openSync(logPath, 'w', 0o600);
+  const log = openLog(logPath);
   const settings = {
     listen_addresses: '127.0.0.1',
     port,

@@ -14,6 +14,7 @@ import {
   STATE,
   writeSecretFile,
 } from './folder.mjs';
+import { keepService } from './keepService.mjs';
 import { asksDatabase, postgresPrograms, startPostgres } from './postgres.mjs';
 import { account } from './process.mjs';
 import { ping, startRedis } from './redis.mjs';
@@ -91,8 +92,12 @@ async function existingRedis(url) {
   return { url, stop: async () => undefined };
 }
 
-/** PostgreSQL and Redis whose data stay, for `npm start` and `npm run dev`. */
-export async function lastingServices() {
+/**
+ * PostgreSQL and Redis whose data stay, for `npm start` and `npm run dev`.
+ *
+ * @param {(error: unknown) => void} onLoss told when one of them has died for good
+ */
+export async function lastingServices(onLoss) {
   const { DATABASE_URL, REDIS_URL } = process.env;
   await ensurePrograms({ postgres: !DATABASE_URL, redis: !REDIS_URL });
   const users = serviceUsers();
@@ -106,12 +111,17 @@ export async function lastingServices() {
     : await step(
         'Starting PostgreSQL',
         () =>
-          startPostgres({
-            folder,
-            user: users.postgres,
-            password: secret.databasePassword,
-            durable: true,
-            port: ports.postgres,
+          keepService({
+            name: 'PostgreSQL',
+            onLoss,
+            launch: (port = ports.postgres) =>
+              startPostgres({
+                folder,
+                user: users.postgres,
+                password: secret.databasePassword,
+                durable: true,
+                port,
+              }),
           }),
         ({ version, port }) => `version ${version} on 127.0.0.1:${port}, data in ${folder}`,
       );
@@ -120,13 +130,18 @@ export async function lastingServices() {
     : await step(
         'Starting Redis',
         () =>
-          startRedis({
-            program: which('redis-server'),
-            folder,
-            user: users.redis,
-            password: secret.redisPassword,
-            durable: true,
-            port: ports.redis,
+          keepService({
+            name: 'Redis',
+            onLoss,
+            launch: (port = ports.redis) =>
+              startRedis({
+                program: which('redis-server'),
+                folder,
+                user: users.redis,
+                password: secret.redisPassword,
+                durable: true,
+                port,
+              }),
           }),
         ({ port }) => `on 127.0.0.1:${port}`,
       );

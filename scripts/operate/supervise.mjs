@@ -2,20 +2,12 @@
  * The application's own processes: each writes to a log file, and is started again when it dies,
  * at once the first time and with growing pauses when it keeps dying.
  */
-import {
-  closeSync,
-  existsSync,
-  openSync,
-  readFileSync,
-  renameSync,
-  rmSync,
-  statSync,
-} from 'node:fs';
+import { closeSync, existsSync, readFileSync } from 'node:fs';
 import { Fault } from './fault.mjs';
+import { openLog } from './folder.mjs';
 import { end, isEnding, start, sweep } from './process.mjs';
 import { say } from './say.mjs';
 
-const LOG_LIMIT_BYTES = 10 * 1024 * 1024;
 const STEADY_MS = 20_000;
 const LONGEST_PAUSE_MS = 15_000;
 
@@ -45,8 +37,7 @@ export function keepRunning({ name, parameters, env, cwd, log, echo = false }) {
   let deaths = 0;
 
   const launch = () => {
-    if (existsSync(log) && statSync(log).size > LOG_LIMIT_BYTES) renameSync(log, `${log}.1`);
-    const output = openSync(log, 'a', 0o600);
+    const output = openLog(log);
     const startedAt = performance.now();
     child = start(process.execPath, parameters, {
       env,
@@ -68,7 +59,6 @@ export function keepRunning({ name, parameters, env, cwd, log, echo = false }) {
       timer = setTimeout(launch, pause);
     });
   };
-  rmSync(`${log}.1`, { force: true });
   launch();
 
   return {
