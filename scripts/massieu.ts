@@ -1,6 +1,10 @@
 /** The command line: derive, evaluate and check a formulation without database or server. */
 import { readFileSync } from 'node:fs';
-import { readArguments, USAGE, UsageFault } from '../shared/thermodynamics/commandLine/arguments.ts';
+import {
+  readArguments,
+  USAGE,
+  UsageFault,
+} from '../shared/thermodynamics/commandLine/arguments.ts';
 import { run } from '../shared/thermodynamics/commandLine/run.ts';
 
 const STANDARD_INPUT = 0;
