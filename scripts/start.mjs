@@ -12,7 +12,7 @@ import { ownFolder, readJson, ROOT, secrets, STATE, writeSecretFile } from './op
 import { ensurePackages, requireNode } from './operate/packages.mjs';
 import { freePort, freePortFrom, isFree } from './operate/port.mjs';
 import { endAll, run } from './operate/process.mjs';
-import { claim, release } from './operate/running.mjs';
+import { claim, release, whoRuns } from './operate/running.mjs';
 import { say, since, step } from './operate/say.mjs';
 import { lastingServices } from './operate/services.mjs';
 import { didNotComeUp, keepRunning } from './operate/supervise.mjs';
@@ -110,17 +110,21 @@ async function answers(url) {
   }
 }
 
+/** When Massieu runs here already, say where, and end in peace. */
+function leaveToOther(other) {
+  if (other === null) return;
+  say(`Massieu already runs in this folder (process ${other.pid}): ${other.url}`);
+  say(`End it there with Ctrl-C, or with: kill ${other.pid}`);
+  process.exit(0);
+}
+
 async function main() {
   const beginning = performance.now();
   requireNode();
+  leaveToOther(whoRuns());
   const port = await choosePort();
   const address = `http://127.0.0.1:${port}`;
-  const other = claim(address);
-  if (other !== null) {
-    say(`Massieu already runs in this folder (process ${other.pid}): ${other.url}`);
-    say(`End it there with Ctrl-C, or with: kill ${other.pid}`);
-    process.exit(0);
-  }
+  leaveToOther(claim(address));
   listenForTheEnd();
   say('Starting Massieu');
   await ensurePackages();

@@ -101,14 +101,15 @@ export function readJson(path) {
 }
 
 /**
- * The secrets of this checkout, made at the first start and kept.
+ * The secrets that belong to what lies in a folder, made at the first start and kept there.
  *
  * @param {readonly string[]} names
+ * @param {string} [folder]
  * @returns {Record<string, string>}
  */
-export function secrets(names) {
-  ownFolder(STATE, 0o711);
-  const path = join(STATE, 'secrets.json');
+export function secrets(names, folder = STATE) {
+  ownFolder(folder, 0o711);
+  const path = join(folder, 'secrets.json');
   const known = existsSync(path) ? readJson(path) : {};
   const missing = names.filter((name) => typeof known[name] !== 'string');
   for (const name of missing) known[name] = randomSecret();

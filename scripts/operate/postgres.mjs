@@ -188,7 +188,7 @@ export async function startPostgres({ folder, user, password, durable, port: pre
     if (answer?.refused === true) {
       throw new Fault(
         'PostgreSQL refuses our password; the secrets of this checkout are not those of its database.',
-        `Put back .massieu/secrets.json, or move ${cluster} away to begin with an empty database.`,
+        `Put back ${join(folder, 'secrets.json')}, or move ${cluster} away to begin with an empty database.`,
       );
     }
     throw new Fault('PostgreSQL did not come up.', `The end of its log, ${logPath}:\n${tail}`);

@@ -39,6 +39,16 @@ function place(content) {
 }
 
 /**
+ * Who runs in this checkout now.
+ *
+ * @returns {{ pid: number, url: string } | null}
+ */
+export function whoRuns() {
+  const other = readJson(PLACE);
+  return isRunning(other) ? other : null;
+}
+
+/**
  * Claim the checkout.
  *
  * @param {string} url the address at which this start will answer

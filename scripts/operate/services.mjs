@@ -101,8 +101,9 @@ export async function lastingServices(onLoss) {
   const { DATABASE_URL, REDIS_URL } = process.env;
   await ensurePrograms({ postgres: !DATABASE_URL, redis: !REDIS_URL });
   const users = serviceUsers();
-  const secret = secrets(['databasePassword', 'redisPassword']);
   const folder = DATABASE_URL && REDIS_URL ? STATE : servicesFolder([users.postgres, users.redis]);
+  // Beside the cluster, whose password it is, wherever that lies.
+  const secret = secrets(['databasePassword', 'redisPassword'], folder);
   const portsPath = join(STATE, 'ports.json');
   const ports = readJson(portsPath);
 
