@@ -20,14 +20,20 @@ const MAY_IMPORT = {
   contracts: ['units', 'algebra', 'print', 'numerics', 'language', 'thermodynamics'],
 };
 
+const EXCEPTIONS = {
+  // The exponents of a dimension are exact rationals, which are the algebra's.
+  units: ['./algebra/rational.ts'],
+  // The shape of its outcome, which is fixed by those who store and show it.
+  thermodynamics: ['./contracts/derivation.ts'],
+};
+
 const directionsInShared = Object.entries(MAY_IMPORT).map(([folder, siblings]) => ({
   target: `./shared/${folder}`,
   from: './shared',
   except: [
     `./${folder}`,
     ...siblings.map((sibling) => `./${sibling}`),
-    // The exponents of a dimension are exact rationals, which are the algebra's.
-    ...(folder === 'units' ? ['./algebra/rational.ts'] : []),
+    ...(EXCEPTIONS[folder] ?? []),
   ],
   message: `shared/${folder} may import ${siblings.length === 0 ? 'nothing else of shared/' : `only ${siblings.join(', ')} of shared/`}.`,
 }));

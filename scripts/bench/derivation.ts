@@ -21,7 +21,7 @@ function timed(source: string) {
 
 const first = timed(model.source(''));
 const { derivation } = first.outcome;
-if (derivation === null || derivation === undefined) {
+if (derivation === undefined) {
   const words = first.outcome.diagnostics.map(
     ({ line, column, message }) => `${line}:${column} ${message}`,
   );
@@ -31,7 +31,6 @@ if (derivation === null || derivation === undefined) {
   const warm: number[] = [];
   for (let run = 1; run <= WARM_RUNS; run += 1) {
     if (run > 5 && performance.now() - begin > LONGEST_MS) break;
-    // One run to warm up for each shape of code is the cold one; every later one counts.
     warm.push(timed(model.source(`_${run}`)).ms);
   }
   const again = Array.from({ length: 5 }, () => timed(model.source('')).ms);

@@ -65,6 +65,7 @@ describe('the directions of the code', () => {
     ['shared/algebra/probe.ts', '../units/dimension.ts'],
     ['shared/language/probe.ts', '../algebra/expression.ts'],
     ['shared/thermodynamics/probe.ts', '../language/formulation.ts'],
+    ['shared/thermodynamics/probe.ts', '../contracts/derivation.ts'],
     ['shared/contracts/probe.ts', '../language/formulation.ts'],
     ['src/probe.ts', '../shared/contracts/models.ts'],
     ['server/probe.ts', '../shared/contracts/models.ts'],
