@@ -5,6 +5,7 @@
  */
 import { copyFileSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join, relative } from 'node:path';
+import { stripVTControlCharacters } from 'node:util';
 import { Fault } from './fault.mjs';
 import { ROOT } from './folder.mjs';
 import { run } from './process.mjs';
@@ -19,6 +20,13 @@ const CONFIGURATION = ['package-lock.json', 'tsconfig.json'];
 const RELATIVE_TYPESCRIPT =
   /((?:from|import|import\(|new URL\()\s*["']\.{1,2}\/[^"']*)\.tsx?(["'])/g;
 
+/** What a tool said, up to where it begins to list its own functions. */
+function withoutStack(output) {
+  const lines = stripVTControlCharacters(output).trim().split('\n');
+  const stack = lines.findIndex((line) => /^\s+at /.test(line));
+  return lines.slice(0, stack === -1 ? 20 : Math.min(stack, 20)).join('\n');
+}
+
 export function buildClient() {
   return whenChanged(
     CLIENT,
@@ -30,7 +38,8 @@ export function buildClient() {
         {
           cwd: ROOT,
           env: { ...process.env, NODE_ENV: 'production' },
-          fails: (tail) => new Fault('The client could not be built.', `Vite said:\n${tail}`),
+          fails: (_, output) =>
+            new Fault('The client could not be built.', `Vite said:\n${withoutStack(output)}`),
         },
       );
     },
