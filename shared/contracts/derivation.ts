@@ -157,6 +157,8 @@ export const derivationSchema = z.object({
   domain: z.array(z.object({ tex: z.string(), text: z.string() })),
   properties: z.array(derivedPropertySchema),
   claims: z.array(claimResultSchema),
+  /** Properties of the catalogue that this model has no value of, with the reason as a sentence. */
+  absent: z.array(z.object({ symbol: z.string(), reason: z.string() })).optional(),
 });
 export type Derivation = z.infer<typeof derivationSchema>;
 

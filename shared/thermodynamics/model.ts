@@ -84,9 +84,12 @@ export function createModel(
       known.set(name, result);
       return result;
     } catch (error) {
-      if (error instanceof NoSuchDerivative) known.set(name, error);
-      else known.delete(name);
-      throw error;
+      known.delete(name);
+      // The constructors' answer to a division by zero, such as by ∂p/∂V of a photon gas.
+      const isDivision = error instanceof RangeError && error.message.startsWith('division');
+      const fault = isDivision ? new NoSuchDerivative('It divides by what is always zero.') : error;
+      if (fault instanceof NoSuchDerivative) known.set(name, fault);
+      throw fault;
     }
   };
 
@@ -95,6 +98,8 @@ export function createModel(
     if (e === surroundings.lnFunction) return f;
     if (e.kind === 'abbreviation' || naturals.includes(e as SymbolNode)) return e;
     if (e.kind === 'symbol') {
+      const variable = formulation.variables.find(({ name }) => name === e.name);
+      if (variable) return variable.symbol;
       if (ofCatalogue ? e.positive : declared.has(e.name)) return e;
       return byName.has(e.name) ? worked(e.name).value : e;
     }

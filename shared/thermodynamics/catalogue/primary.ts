@@ -153,7 +153,7 @@ const DEFINITIONS: Readonly<Record<Surroundings['ensemble'], (s: Surroundings) =
       A: negate(multiply(thermalEnergy(s), s.lnFunction)),
       H: plus(s.energy, work),
       G: plus(helmholtz, work),
-      Omega: s.components.length > 0 ? subtract(helmholtz, gibbsSum(s)) : undefined,
+      Omega: s.extent && s.components.length > 0 ? subtract(helmholtz, gibbsSum(s)) : undefined,
       ...Object.fromEntries(
         s.components.map((c) => [
           c.chemicalPotentialName,

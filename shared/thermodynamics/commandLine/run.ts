@@ -6,7 +6,7 @@ import { evaluate } from '../evaluate.ts';
 import { verify } from '../verification/index.ts';
 import type { Arguments } from './arguments.ts';
 import { readAssignments } from './assignments.ts';
-import { figure, table } from './table.ts';
+import { alignOnPoint, figure, table } from './table.ts';
 
 export interface Outcome {
   readonly output: string;
@@ -91,7 +91,8 @@ function evaluateAt(args: Arguments, source: string): Outcome {
   if (isFault(list)) return outcome(args, list, { values: [] }, []);
   const result = evaluate(model, state.values, overrides.values, args.quantities);
   list.push(...result.diagnostics.map(shown));
-  const rows = result.values.map(({ symbol, value, unit }) => [symbol, figure(value), unit]);
+  const figures = alignOnPoint(result.values.map(({ value }) => figure(value)));
+  const rows = result.values.map(({ symbol, unit }, i) => [symbol, figures[i] ?? '', unit]);
   return outcome(args, list, { values: result.values }, [table(rows)]);
 }
 

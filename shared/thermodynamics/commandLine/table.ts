@@ -20,7 +20,7 @@ export function table(rows: readonly (readonly string[])[], right: readonly numb
     .join('\n');
 }
 
-/** Numbers in nine figures, aligned on the point by whoever pads them. */
+/** A number in nine figures. */
 export function figure(value: number): string {
   if (value === 0) return '0';
   const magnitude = Math.abs(value);
@@ -29,4 +29,17 @@ export function figure(value: number): string {
     .toExponential(8)
     .replace(/\.?0+e/, 'e')
     .replace('e+', 'e');
+}
+
+/** Numbers padded on both sides so that their decimal points stand below each other. */
+export function alignOnPoint(figures: readonly string[]): string[] {
+  const pointOf = (text: string): number => {
+    const end = /[.e]/.exec(text)?.index;
+    return end ?? text.length;
+  };
+  const before = Math.max(0, ...figures.map(pointOf));
+  const after = Math.max(0, ...figures.map((text) => text.length - pointOf(text)));
+  return figures.map((text) =>
+    text.padStart(before + text.length - pointOf(text)).padEnd(before + after),
+  );
 }

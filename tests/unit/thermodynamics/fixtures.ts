@@ -1,7 +1,6 @@
 /** Formulations built by hand, for tests of what derives from them. */
 import {
   abbreviation,
-  divide,
   fraction,
   integer,
   ln,
@@ -55,6 +54,87 @@ function quantity(
   };
 }
 
+type Natural = Formulation['variables'][number];
+
+const NATURALS: Readonly<Record<string, Natural>> = {
+  N: { role: 'number', name: 'N', symbol: N, dimension: dimension(), description: '', species: '' },
+  V: { role: 'extent', name: 'V', symbol: V, dimension: dimension(3), description: 'volume' },
+  T: {
+    role: 'temperature',
+    name: 'T',
+    symbol: T,
+    dimension: dimension(0, 0, 0, 0, 1),
+    description: 'temperature',
+  },
+  M: {
+    role: 'extent',
+    name: 'M',
+    symbol: symbol('M', { positive: true }),
+    dimension: dimension(),
+    description: 'sites',
+  },
+  mu: {
+    role: 'chemical potential',
+    name: 'mu',
+    symbol: symbol('mu'),
+    dimension: dimension(2, 1, -2),
+    description: '',
+    species: '',
+  },
+  p: {
+    role: 'pressure',
+    name: 'p',
+    symbol: symbol('p', { positive: true }),
+    dimension: dimension(1, 1, -2),
+    description: '',
+  },
+  U: {
+    role: 'energy',
+    name: 'U',
+    symbol: symbol('U', { positive: true }),
+    dimension: dimension(2, 1, -2),
+    description: '',
+  },
+  B: {
+    role: 'field',
+    name: 'B',
+    symbol: symbol('B'),
+    dimension: dimension(0, 1, -2, -1),
+    description: '',
+    response: 'M_B',
+  },
+};
+
+/** The symbol of a natural variable. */
+export function natural(name: string): Natural['symbol'] {
+  const found = NATURALS[name];
+  if (!found) throw new RangeError(`no variable ${name}`);
+  return found.symbol;
+}
+
+/** A formulation of any ensemble with the fluid's constants. */
+export function stated(
+  ensemble: Formulation['ensemble'],
+  variables: readonly string[],
+  lnPartitionFunction: Formulation['lnPartitionFunction'],
+): Formulation {
+  const names = {
+    canonical: 'Q',
+    'grand canonical': 'Xi',
+    'isothermal-isobaric': 'Delta',
+    microcanonical: 'W',
+  } as const;
+  return {
+    ...fluid(),
+    ensemble,
+    partitionFunction: names[ensemble],
+    variables: variables.flatMap((name) => NATURALS[name] ?? []),
+    lnPartitionFunction,
+    domain: [],
+    normalizedSource: '',
+  };
+}
+
 /** Hard core with mean-field attraction. */
 export function fluid(): Formulation {
   const lnQ = sum([
@@ -69,24 +149,7 @@ export function fluid(): Formulation {
     ensemble: 'canonical',
     partitionFunction: 'Q',
     species: [{ name: '', description: '' }],
-    variables: [
-      {
-        role: 'number',
-        name: 'N',
-        symbol: N,
-        dimension: dimension(),
-        description: '',
-        species: '',
-      },
-      { role: 'extent', name: 'V', symbol: V, dimension: dimension(3), description: 'volume' },
-      {
-        role: 'temperature',
-        name: 'T',
-        symbol: T,
-        dimension: dimension(0, 0, 0, 0, 1),
-        description: 'temperature',
-      },
-    ],
+    variables: ['N', 'V', 'T'].flatMap((name) => NATURALS[name] ?? []),
     quantities: [
       quantity('constant', 'm', dimension(0, 1), 'kg', '6.6335e-26', 'molecular mass'),
       quantity('parameter', 'a', dimension(5, 1, -2), 'J m^3', '3.7e-49', 'attraction'),
