@@ -58,17 +58,29 @@ export function Formula({ tex, text, className }: FormulaProps) {
 
 type Hidden = 'left' | 'right' | 'both' | undefined;
 
+interface BoxedFormulaProps extends FormulaProps {
+  /** What the formula is, for those who reach its box by keyboard. */
+  readonly label?: string;
+}
+
 /** A formula on a line of its own; a long one scrolls in its box, faded where it is cut. */
-export function DisplayFormula({
+export function DisplayFormula(props: BoxedFormulaProps) {
+  return <BoxedFormula {...props} isDisplay />;
+}
+
+/** A formula in the size of running text, in a box in which a long one scrolls. */
+export function ScrollingFormula(props: BoxedFormulaProps) {
+  return <BoxedFormula {...props} isDisplay={false} />;
+}
+
+function BoxedFormula({
   tex,
   text,
   className,
   label,
-}: FormulaProps & {
-  /** What the formula is, for those who reach its box by keyboard. */
-  readonly label?: string;
-}) {
-  const markup = useTypeset()?.(tex, true);
+  isDisplay,
+}: BoxedFormulaProps & { readonly isDisplay: boolean }) {
+  const markup = useTypeset()?.(tex, isDisplay);
   const box = useRef<HTMLDivElement>(null);
   const [hidden, setHidden] = useState<Hidden>();
 
@@ -95,7 +107,7 @@ export function DisplayFormula({
     <div
       ref={box}
       data-more={hidden}
-      className={classes('formula-scroll text-formula', className)}
+      className={classes('formula-scroll', isDisplay && 'text-formula', className)}
       // A box that scrolls must be reachable by keyboard.
       {...(hidden ? { tabIndex: 0, role: 'region', 'aria-label': label ?? 'formula' } : {})}
     >

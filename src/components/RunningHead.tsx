@@ -9,7 +9,9 @@ import { countWaiting, useDesk, useSession } from '../api/index.ts';
 import { paths, signInPath } from '../routes/paths.ts';
 import { ActLink } from './Button.tsx';
 import { FindButton } from './Find.tsx';
+import { Mark } from './Mark.tsx';
 import { PersonMenu } from './PersonMenu.tsx';
+import { ThemeButton } from './ThemeButton.tsx';
 
 export interface Place {
   readonly label: string;
@@ -35,17 +37,6 @@ export interface RunningHeadProps {
 
 const BAND = 'mx-auto max-w-content';
 
-export function Mark() {
-  return (
-    <Link
-      to={paths.front}
-      className="text-ink text-[21px] leading-none font-semibold tracking-[0.2px] italic no-underline"
-    >
-      Massieu
-    </Link>
-  );
-}
-
 function DeskLink() {
   const desk = useDesk();
   const count = desk.data ? countWaiting(desk.data) : 0;
@@ -70,6 +61,7 @@ function Right() {
     const here = globalThis.location.pathname + globalThis.location.search;
     return (
       <>
+        <ThemeButton />
         <Link to={paths.language} className="text-ink-2 hover:text-ink py-4 no-underline">
           The language
         </Link>

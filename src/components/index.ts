@@ -1,7 +1,10 @@
 /** What rooms and features build with, in reading order. */
 export { classes } from './classes.ts';
-export { Room, Content, useWindowTitle } from './Room.tsx';
-export { RunningHead, Mark } from './RunningHead.tsx';
+export { Room } from './Room.tsx';
+export { Content } from './Content.tsx';
+export { useWindowTitle } from './windowTitle.ts';
+export { RunningHead } from './RunningHead.tsx';
+export { Mark } from './Mark.tsx';
 export type { Place, Section } from './RunningHead.tsx';
 export { TwoColumns, Sheet, Margin, SmallHeading, Note, Tools } from './Layout.tsx';
 export {
@@ -21,7 +24,7 @@ export { Empty, Loading, Fault, Stale } from './Empty.tsx';
 export { ErrorBoundary } from './ErrorBoundary.tsx';
 export { DataTable, tabulate } from './DataTable.tsx';
 export type { Column } from './DataTable.tsx';
-export { Formula, DisplayFormula, loadTypesetting } from './Formula.tsx';
+export { Formula, DisplayFormula, ScrollingFormula, loadTypesetting } from './Formula.tsx';
 export { Prose } from './Prose.tsx';
 export { RelativeTime, formatDate, formatRelative } from './RelativeTime.tsx';
 export { Dialog } from './Dialog.tsx';

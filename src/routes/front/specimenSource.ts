@@ -9,5 +9,4 @@ let Λ = h / sqrt(2 π m k T)
 
 q = (V - N b) / Λ^3 * exp(a N / (V k T))
 Q = q^N / N!
-claim "ideal when dilute"  p V / (N k T) -> 1  as V -> inf
-`;
+claim "ideal when dilute"  p V / (N k T) -> 1  as V -> inf`;

@@ -17,7 +17,7 @@ const BEGINNINGS = [
 type Beginning = (typeof BEGINNINGS)[number]['value'];
 
 function sourceOf(beginning: Beginning, title: string): string {
-  if (beginning === 'specimen') return `# ${title}\n${SPECIMEN}`;
+  if (beginning === 'specimen') return `# ${title}\n${SPECIMEN}\n`;
   return `# ${title}\nensemble canonical\n\n`;
 }
 

@@ -1,0 +1,56 @@
+/** The properties that the specimen shows, as they derive. */
+import type { Derivation } from '../../../shared/contracts/derivation.ts';
+import { ScrollingFormula } from '../../components/Formula.tsx';
+import { SealMark } from '../../components/Seal.tsx';
+import { classes } from '../../components/classes.ts';
+
+const SHOWN = ['p', 'U', 'S', 'C_V', 'C_p'];
+const OUTCOME = { passed: 'holds', failed: 'does not hold', undecided: 'not decided' } as const;
+
+export function Consequences({
+  derivation,
+  isStale,
+}: {
+  readonly derivation: Derivation;
+  readonly isStale: boolean;
+}) {
+  const shown = SHOWN.flatMap((symbol) =>
+    derivation.properties.filter((property) => property.symbol === symbol),
+  );
+  return (
+    <div className={classes('transition-opacity duration-[120ms]', isStale && 'opacity-60')}>
+      <dl>
+        {shown.map((property) => (
+          <div
+            key={property.symbol}
+            className="border-rule desk:flex-nowrap flex flex-wrap items-center gap-x-14 border-b border-dotted py-10"
+          >
+            <dt className="text-label text-ink-3 desk:w-[140px] min-w-[140px] flex-none font-mono">
+              {property.name}
+            </dt>
+            <dd className="min-w-0 flex-1">
+              <ScrollingFormula
+                tex={`${property.symbolTex} = ${property.tex}`}
+                text={`${property.symbol} = ${property.text}`}
+                label={property.name}
+              />
+            </dd>
+          </div>
+        ))}
+      </dl>
+      {derivation.claims.map((claim) => (
+        <p
+          key={claim.line}
+          className="text-note text-ink-2 mt-10 flex flex-wrap items-center gap-x-8"
+        >
+          <SealMark status={claim.status} />
+          {claim.title || claim.text}
+          <span className="text-label text-ink-3 font-mono">
+            {OUTCOME[claim.status]}
+            {claim.method && `, ${claim.method}`}
+          </span>
+        </p>
+      ))}
+    </div>
+  );
+}
