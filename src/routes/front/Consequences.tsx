@@ -23,9 +23,9 @@ export function Consequences({
         {shown.map((property) => (
           <div
             key={property.symbol}
-            className="border-rule desk:flex-nowrap flex flex-wrap items-center gap-x-14 border-b border-dotted py-10"
+            className="border-rule flex items-center gap-14 border-b border-dotted py-10"
           >
-            <dt className="text-label text-ink-3 desk:w-[140px] min-w-[140px] flex-none font-mono">
+            <dt className="text-label text-ink-3 desk:w-[140px] w-[112px] flex-none font-mono">
               {property.name}
             </dt>
             <dd className="min-w-0 flex-1">

@@ -192,19 +192,19 @@ function Drawing({ portrait, moving, width }: IsothermPlotProps & { readonly wid
             <text x={area.right + 5} y={area.top + 6}>
               <Reduced symbol="T" />
             </text>
-            <text x={x(1) - 6} y={y(1) - 12} textAnchor="middle">
+            <text x={x(1) + 8} y={y(1) - 12} className="plot-halo">
               critical point
             </text>
           </>
         )}
       </g>
       {portrait.coexistence.length > 0 && (
-        <text x={x(1.55)} y={y(0.33)} className="fill-verdigris">
+        <text x={x(1.55)} y={y(0.33)} className="plot-halo fill-verdigris">
           coexistence
         </text>
       )}
       {portrait.spinodal.length > 0 && (
-        <text x={x(2.9)} y={y(0.14)} className="fill-cinnabar">
+        <text x={x(2.9)} y={y(0.14)} className="plot-halo fill-cinnabar">
           spinodal
         </text>
       )}

@@ -24,7 +24,7 @@ export function MovingTemperature({
 }: MovingTemperatureProps) {
   return (
     <div className="text-label text-ink-3 mt-8 font-mono">
-      <label className="flex flex-wrap items-center gap-x-14 gap-y-4">
+      <label className="flex items-center gap-14">
         <span className="text-ultramarine">move an isotherm</span>
         <input
           type="range"
@@ -34,9 +34,9 @@ export function MovingTemperature({
           value={reduced}
           onChange={(event) => onChange(event.target.valueAsNumber)}
           aria-valuetext={`${significant(temperature)} K`}
-          className="slider min-w-[120px] flex-1"
+          className="slider min-w-[80px] flex-1"
         />
-        <span className="text-ink min-w-[68px] text-right tabular-nums">
+        <span className="text-ink flex-none text-right tabular-nums">
           {significant(temperature)} <span className="text-ink-3">K</span>
         </span>
       </label>

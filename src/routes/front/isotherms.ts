@@ -63,7 +63,7 @@ function reducedPortrait(fluid: Fluid, critical: CriticalPoint): Portrait {
       vapour.unshift([phases.vapour / vc, phases.pressure / pc]);
     }
   }
-  for (const reduced of [0.3, 0.4, 0.5, 0.6, 0.68, ...DOME]) {
+  for (const reduced of [0.14, 0.2, 0.26, 0.33, 0.4, 0.5, 0.6, 0.68, ...DOME]) {
     const turning = findSpinodal(fluid, critical, reduced * tc);
     if (turning) {
       turningLiquid.push([turning.liquid / vc, fluid.pressure(reduced * tc, turning.liquid) / pc]);
