@@ -9,12 +9,12 @@ import { join } from 'node:path';
 import { buildClient, buildNode } from './operate/build.mjs';
 import { Fault, report } from './operate/fault.mjs';
 import { ownFolder, readJson, ROOT, secrets, STATE, writeSecretFile } from './operate/folder.mjs';
-import { ensurePackages, requireNode } from './operate/packages.mjs';
+import { requireNode } from './operate/packages.mjs';
 import { freePort, freePortFrom, isFree } from './operate/port.mjs';
 import { endAll, run } from './operate/process.mjs';
 import { claim, release, whoRuns } from './operate/running.mjs';
 import { say, since, step } from './operate/say.mjs';
-import { lastingServices } from './operate/services.mjs';
+import { ensureEverything, lastingServices } from './operate/services.mjs';
 import { didNotComeUp, keepRunning } from './operate/supervise.mjs';
 import { until } from './operate/wait.mjs';
 
@@ -127,7 +127,7 @@ async function main() {
   leaveToOther(claim(address));
   listenForTheEnd();
   say('Starting Massieu');
-  await ensurePackages();
+  await ensureEverything({ postgres: !process.env.DATABASE_URL, redis: !process.env.REDIS_URL });
 
   const services = await lastingServices((error) => {
     if (leaving) return;

@@ -12,10 +12,10 @@ import { join } from 'node:path';
 import { buildClient, buildNode } from './operate/build.mjs';
 import { Fault, report } from './operate/fault.mjs';
 import { ROOT } from './operate/folder.mjs';
-import { ensurePackages, requireNode } from './operate/packages.mjs';
+import { requireNode } from './operate/packages.mjs';
 import { endAll, run, start } from './operate/process.mjs';
 import { say, step } from './operate/say.mjs';
-import { ensurePrograms, throwAwayServices } from './operate/services.mjs';
+import { ensureEverything, throwAwayServices } from './operate/services.mjs';
 
 /** Checks that look at the sources only; each counts as one test. */
 const CHECKS = {
@@ -132,12 +132,11 @@ async function main() {
   requireNode();
   const { stages, filters } = chosen(process.argv.slice(2));
   const wanted = Object.keys(PROJECTS).filter((name) => stages.includes(name));
-  await ensurePackages();
   const needsServices = wanted.some((name) => PROJECTS[name].services);
   const needsBrowser = wanted.some((name) => PROJECTS[name].browser);
   const { TEST_DATABASE_URL, TEST_REDIS_URL } = process.env;
   const given = Boolean(TEST_DATABASE_URL && TEST_REDIS_URL);
-  await ensurePrograms({
+  await ensureEverything({
     postgres: needsServices && !given,
     redis: needsServices && !given,
     chromium: needsBrowser,

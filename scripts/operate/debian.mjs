@@ -11,6 +11,11 @@ export function which(program) {
   return folders.map((folder) => `${folder}/${program}`).find((path) => existsSync(path));
 }
 
+/** Whether installing will ask for a password, so that nothing else should write meanwhile. */
+export function asksForPassword() {
+  return privilege()?.foreground === true;
+}
+
 /** How to run a command as root: directly, by sudo, or not at all. */
 function privilege() {
   if (process.getuid?.() === 0) return { prefix: [], foreground: false };
@@ -54,6 +59,7 @@ export async function installDebian(packages, instead) {
     ];
     return run(program, rest, {
       foreground: means.foreground,
+      letFinish: true,
       stdio: [means.foreground ? 'inherit' : 'ignore', 'pipe', 'pipe'],
       onLine: (line) => progress(line.slice(0, 60)),
       fails: (tail) =>

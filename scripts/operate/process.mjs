@@ -49,12 +49,14 @@ export function account(name) {
  * @param {import('node:child_process').StdioOptions} [options.stdio]
  * @param {string} [options.deathSignal] sent to the child when this process dies
  * @param {boolean} [options.foreground] stay in the terminal's session (a program that asks)
+ * @param {boolean} [options.letFinish] never interrupt it: we wait for it before we end, and it
+ *   goes on should we be killed (an installation, which must not stop halfway)
  */
 export function start(command, parameters, options = {}) {
   if (ending) throw new Error('Nothing is started while ending.');
-  const { user = null, deathSignal = 'TERM', foreground = false } = options;
+  const { user = null, deathSignal = 'TERM', foreground = false, letFinish = false } = options;
   const prefix =
-    SETPRIV === undefined || foreground
+    SETPRIV === undefined || foreground || letFinish
       ? []
       : [
           SETPRIV,
@@ -77,7 +79,7 @@ export function start(command, parameters, options = {}) {
     stdio: options.stdio ?? ['ignore', 'pipe', 'pipe'],
     detached: !foreground,
   });
-  const entry = { child, foreground, signal: `SIG${deathSignal}` };
+  const entry = { child, foreground, letFinish, signal: `SIG${deathSignal}` };
   living.add(entry);
   child.once('exit', () => living.delete(entry));
   child.once('error', () => living.delete(entry));
@@ -157,7 +159,8 @@ export function sweep(pid) {
 /** End every child, the youngest first. */
 export async function endAll() {
   ending = true;
-  for (const { child, foreground, signal } of [...living].reverse()) {
-    if (!foreground) await end(child, signal);
+  for (const { child, foreground, letFinish, signal } of [...living].reverse()) {
+    if (letFinish) await new Promise((resolve) => child.once('exit', resolve));
+    else if (!foreground) await end(child, signal);
   }
 }

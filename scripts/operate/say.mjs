@@ -1,11 +1,16 @@
 /**
- * One line to each step. On a terminal the line shows its progress in place; elsewhere a long step
- * repeats itself now and then, so that a log shows that it still moves.
+ * One line to each step. On a terminal a line in place shows the progress of the steps that run;
+ * elsewhere a long step repeats itself now and then, so that a log shows that it still moves.
  */
 const onTerminal = process.stdout.isTTY === true;
 const REPEAT_MS = onTerminal ? 500 : 15_000;
 
+/** Steps that run now; two may run at once. */
+const active = new Set();
+let timer;
+
 export function say(line) {
+  if (onTerminal && active.size > 0) process.stdout.write('\r\x1b[2K');
   process.stdout.write(`${line}\n`);
 }
 
@@ -13,6 +18,18 @@ export function say(line) {
 export function since(start) {
   const seconds = (performance.now() - start) / 1000;
   return `${seconds < 10 ? seconds.toFixed(1) : seconds.toFixed(0)} s`;
+}
+
+function show() {
+  const lines = [...active].map(
+    ({ title, words, start }) => `${title} … ${words === '' ? '' : `${words}, `}${since(start)}`,
+  );
+  if (onTerminal) {
+    const width = (process.stdout.columns ?? 80) - 1;
+    process.stdout.write(`\r\x1b[2K${`  ${lines.join('; ')}`.slice(0, width)}`);
+  } else {
+    for (const line of lines) say(`  ${line}`);
+  }
 }
 
 /**
@@ -25,31 +42,23 @@ export function since(start) {
  * @returns {Promise<T>}
  */
 export async function step(title, work, outcome) {
-  const start = performance.now();
-  let words = '';
-  let shown = false;
-  const show = () => {
-    const line = `  ${title} … ${words === '' ? '' : `${words}, `}${since(start)}`;
-    if (onTerminal)
-      process.stdout.write(`\r\x1b[2K${line.slice(0, (process.stdout.columns ?? 80) - 1)}`);
-    else say(line);
-    shown = true;
-  };
-  const timer = setInterval(show, REPEAT_MS);
+  const entry = { title, words: '', start: performance.now() };
+  active.add(entry);
+  timer ??= setInterval(show, REPEAT_MS);
   if (onTerminal) show();
+  let ending = 'failed';
   try {
-    const result = await work((text) => {
-      words = text;
+    const result = await work((words) => {
+      entry.words = words;
     });
-    if (onTerminal && shown) process.stdout.write('\r\x1b[2K');
-    const addition = outcome?.(result) ?? '';
-    say(`  ${title}${addition === '' ? '' : `: ${addition}`} (${since(start)})`);
+    ending = outcome?.(result) ?? '';
     return result;
-  } catch (error) {
-    if (onTerminal && shown) process.stdout.write('\r\x1b[2K');
-    say(`  ${title}: failed (${since(start)})`);
-    throw error;
   } finally {
-    clearInterval(timer);
+    say(`  ${title}${ending === '' ? '' : `: ${ending}`} (${since(entry.start)})`);
+    active.delete(entry);
+    if (active.size === 0) {
+      clearInterval(timer);
+      timer = undefined;
+    }
   }
 }

@@ -4,7 +4,7 @@
  */
 import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
-import { installDebian, which } from './debian.mjs';
+import { asksForPassword, installDebian, which } from './debian.mjs';
 import { Fault } from './fault.mjs';
 import {
   randomSecret,
@@ -16,22 +16,34 @@ import {
 } from './folder.mjs';
 import { keepService } from './keepService.mjs';
 import { asksDatabase, postgresPrograms, startPostgres } from './postgres.mjs';
+import { ensurePackages } from './packages.mjs';
 import { account } from './process.mjs';
 import { ping, startRedis } from './redis.mjs';
 import { step } from './say.mjs';
 
-/** Install from Debian what is missing of the programs, and of chromium if wanted. */
-export async function ensurePrograms({ postgres, redis, chromium = false }) {
+const INSTEAD = 'Or set DATABASE_URL and REDIS_URL to a PostgreSQL and a Redis that exist.';
+
+/**
+ * Install the npm packages, and from Debian what is missing of the programs wanted; both at once,
+ * since each mostly waits for the network.
+ */
+export async function ensureEverything({ postgres, redis, chromium = false }) {
   const packages = [
     ...(postgres && postgresPrograms() === undefined ? ['postgresql'] : []),
     ...(redis && which('redis-server') === undefined ? ['redis-server'] : []),
     ...(chromium && which('chromium') === undefined ? ['chromium'] : []),
   ];
-  if (packages.length === 0) return;
-  await installDebian(
-    packages,
-    'Or set DATABASE_URL and REDIS_URL to a PostgreSQL and a Redis that exist.',
-  );
+  const install = async () => {
+    if (packages.length > 0) await installDebian(packages, INSTEAD);
+  };
+  if (packages.length > 0 && asksForPassword()) {
+    await install();
+    await ensurePackages();
+  } else {
+    const outcomes = await Promise.allSettled([ensurePackages(), install()]);
+    const failure = outcomes.find(({ status }) => status === 'rejected');
+    if (failure !== undefined) throw failure.reason;
+  }
 }
 
 /** The users as which the services run when we are root. */
@@ -99,7 +111,6 @@ async function existingRedis(url) {
  */
 export async function lastingServices(onLoss) {
   const { DATABASE_URL, REDIS_URL } = process.env;
-  await ensurePrograms({ postgres: !DATABASE_URL, redis: !REDIS_URL });
   const users = serviceUsers();
   const folder = DATABASE_URL && REDIS_URL ? STATE : servicesFolder([users.postgres, users.redis]);
   // Beside the cluster, whose password it is, wherever that lies.
@@ -155,7 +166,6 @@ export async function lastingServices(onLoss) {
 
 /** Empty PostgreSQL and Redis in a temporary folder, for tests; `stop` removes everything. */
 export async function throwAwayServices() {
-  await ensurePrograms({ postgres: true, redis: true });
   const users = serviceUsers();
   const folder = mkdtempSync('/tmp/massieu-test-');
   chmodSync(folder, 0o711);
