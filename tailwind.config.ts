@@ -28,8 +28,8 @@ export default {
       ultramarine: mineral('ultramarine'),
     },
     fontFamily: {
-      serif: ['Source Serif 4 Variable', 'Georgia', 'serif'],
-      mono: ['JetBrains Mono', 'monospace'],
+      serif: ["'Source Serif 4 Variable'", 'Georgia', 'serif'],
+      mono: ["'JetBrains Mono'", 'monospace'],
     },
     fontSize: {
       hero: ['clamp(40px, 7vw, 84px)', { lineHeight: '1.02', letterSpacing: '-1.6px' }],

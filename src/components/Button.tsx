@@ -12,7 +12,7 @@ const ACT =
 const QUIET =
   'inline-block rounded border border-rule px-8 py-[3px] font-mono text-label leading-[22px] text-ink-2 no-underline hover:border-ink-3 hover:text-ink disabled:opacity-60';
 const TEXT =
-  'min-h-28 rounded px-4 font-mono text-label text-ultramarine underline decoration-1 underline-offset-[3px] disabled:opacity-60';
+  'font-normal min-h-28 rounded px-4 font-mono text-label text-ultramarine underline decoration-1 underline-offset-[3px] disabled:opacity-60';
 
 interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
   readonly ref?: Ref<HTMLButtonElement>;

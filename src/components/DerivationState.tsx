@@ -8,18 +8,30 @@ export function DerivationState({ derivation }: { readonly derivation: Derivatio
       return derivation.verification ? (
         <Seal status={derivation.verification} />
       ) : (
-        <span className="text-label text-ink-2 font-mono">derived</span>
+        <span className="text-label text-ink-2 font-mono whitespace-nowrap">derived</span>
       );
     case 'failed':
-      return <span className="text-label text-cinnabar font-mono">derivation failed</span>;
+      return (
+        <span className="text-label text-cinnabar font-mono whitespace-nowrap">
+          derivation failed
+        </span>
+      );
     case 'cancelled':
-      return <span className="text-label text-ochre font-mono">derivation cancelled</span>;
+      return (
+        <span className="text-label text-ochre font-mono whitespace-nowrap">
+          derivation cancelled
+        </span>
+      );
     case 'queued':
-      return <span className="text-label text-ink-3 font-mono">waiting to be derived</span>;
+      return (
+        <span className="text-label text-ink-3 font-mono whitespace-nowrap">
+          waiting to be derived
+        </span>
+      );
     case 'deriving':
     case 'verifying':
       return (
-        <span className="text-label text-ultramarine font-mono">
+        <span className="text-label text-ultramarine font-mono whitespace-nowrap">
           {derivation.state} · {Math.round(100 * derivation.progress)} %
         </span>
       );

@@ -1,5 +1,5 @@
 /** A dialog above the page: the browser's own, which keeps the focus inside and closes by Escape. */
-import { useEffect, useId, useRef } from 'react';
+import { useEffect, useEffectEvent, useId, useRef } from 'react';
 import type { ReactNode } from 'react';
 import { QuietButton } from './Button.tsx';
 
@@ -13,22 +13,30 @@ interface DialogProps {
 export function Dialog({ title, onClose, children }: DialogProps) {
   const element = useRef<HTMLDialogElement>(null);
   const id = useId();
+  const onLeave = useEffectEvent(onClose);
 
   useEffect(() => {
     const dialog = element.current;
-    if (dialog && !dialog.open) dialog.showModal();
-    return () => dialog?.close();
+    if (!dialog) return undefined;
+    if (!dialog.open) dialog.showModal();
+    const close = () => onLeave();
+    // A click beside the dialog, on its backdrop, has the dialog itself as its target.
+    const click = (event: MouseEvent) => {
+      if (event.target === dialog) onLeave();
+    };
+    dialog.addEventListener('close', close);
+    dialog.addEventListener('click', click);
+    return () => {
+      dialog.removeEventListener('close', close);
+      dialog.removeEventListener('click', click);
+      dialog.close();
+    };
   }, []);
 
   return (
     <dialog
       ref={element}
       aria-labelledby={id}
-      onClose={onClose}
-      onClick={(event) => {
-        // A click on the backdrop has the dialog itself as its target.
-        if (event.target === element.current) onClose();
-      }}
       className="border-rule bg-sheet text-ink m-auto mt-[12vh] w-[min(640px,calc(100%-32px))] rounded border p-0"
     >
       <div className="px-22 pt-14 pb-22">

@@ -31,19 +31,28 @@ function eventPath({ modelId, versionNumber }: RecordedEvent): string | undefine
   return versionNumber === null ? paths.model(modelId) : paths.version(modelId, versionNumber);
 }
 
+/** Who did it; a derivation comes to its end by itself. */
+function actorOf({ kind, person }: RecordedEvent): string | undefined {
+  if (kind === 'derivation-complete' || kind === 'derivation-failed') return undefined;
+  return person?.name;
+}
+
+function capitalize(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1);
+}
+
 export function EventList({ events }: { readonly events: readonly RecordedEvent[] }) {
   if (events.length === 0) return <p className="text-note">Nothing has happened yet.</p>;
   return (
     <ol className="text-note">
       {events.map((event) => {
         const to = eventPath(event);
+        const actor = actorOf(event);
         const happening = describeEvent(event);
         return (
           <li key={event.id} className="border-hair border-b py-8 last:border-0">
-            {event.person ? <span className="text-ink">{event.person.name} </span> : null}
-            <span>
-              {event.person ? happening : happening[0]?.toUpperCase() + happening.slice(1)}{' '}
-            </span>
+            {actor !== undefined && <span className="text-ink">{actor} </span>}
+            {actor === undefined ? capitalize(happening) : happening}{' '}
             {to ? (
               <Link to={to}>{event.title}</Link>
             ) : (

@@ -1,5 +1,5 @@
 /** Find, on `/`: groups, notebooks and models within reach, by any part of their names. */
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import type { Desk } from '../../shared/contracts/models.ts';
 import { useDesk } from '../api/index.ts';
@@ -81,6 +81,8 @@ function FindDialog({ onClose }: { readonly onClose: () => void }) {
   const navigate = useNavigate();
   const [query, setQuery] = useState('');
   const [chosen, setChosen] = useState(0);
+  const field = useRef<HTMLInputElement>(null);
+  useEffect(() => field.current?.focus(), []);
   const places = useMemo(() => (desk.data ? gatherPlaces(desk.data) : []), [desk.data]);
   const found = findPlaces(places, query);
   const current = found[Math.min(chosen, found.length - 1)];
@@ -94,7 +96,7 @@ function FindDialog({ onClose }: { readonly onClose: () => void }) {
   return (
     <Dialog title="Find" onClose={onClose}>
       <input
-        autoFocus
+        ref={field}
         type="search"
         role="combobox"
         aria-label="Find a group, a notebook or a model"
@@ -126,7 +128,6 @@ function FindDialog({ onClose }: { readonly onClose: () => void }) {
             aria-selected={place === current}
             onClick={() => go(place)}
             onPointerMove={() => setChosen(index)}
-            onKeyDown={undefined}
             className="aria-selected:border-ultramarine aria-selected:bg-ultramarine-wash flex cursor-pointer items-baseline gap-14 border-l-2 border-transparent px-10 py-6"
           >
             <span className="text-body text-ink">{place.title}</span>

@@ -7,7 +7,7 @@ export function TwoColumns({ className, ...rest }: HTMLAttributes<HTMLDivElement
   return (
     <div
       className={classes(
-        'desk:grid-cols-[minmax(0,1fr)_320px] desk:gap-44 grid grid-cols-[minmax(0,1fr)]',
+        'desk:grid-cols-[minmax(0,1fr)_320px] desk:items-start desk:gap-44 grid grid-cols-[minmax(0,1fr)]',
         className,
       )}
       {...rest}

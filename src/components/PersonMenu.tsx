@@ -17,12 +17,29 @@ export function PersonMenu({ person }: { readonly person: Person }) {
   const signOut = useSignOut();
 
   useEffect(() => {
-    if (!isOpen) return undefined;
+    const element = around.current;
+    if (!isOpen || !element) return undefined;
     const onPointer = (event: PointerEvent) => {
-      if (event.target instanceof Node && !around.current?.contains(event.target)) setOpen(false);
+      if (event.target instanceof Node && !element.contains(event.target)) setOpen(false);
+    };
+    const onKey = (event: KeyboardEvent) => {
+      if (event.key !== 'Escape') return;
+      setOpen(false);
+      opener.current?.focus();
+    };
+    const onFocusOut = (event: FocusEvent) => {
+      if (event.relatedTarget instanceof Node && !element.contains(event.relatedTarget)) {
+        setOpen(false);
+      }
     };
     document.addEventListener('pointerdown', onPointer);
-    return () => document.removeEventListener('pointerdown', onPointer);
+    element.addEventListener('keydown', onKey);
+    element.addEventListener('focusout', onFocusOut);
+    return () => {
+      document.removeEventListener('pointerdown', onPointer);
+      element.removeEventListener('keydown', onKey);
+      element.removeEventListener('focusout', onFocusOut);
+    };
   }, [isOpen]);
 
   const leave = () =>
@@ -32,20 +49,7 @@ export function PersonMenu({ person }: { readonly person: Person }) {
     });
 
   return (
-    <div
-      ref={around}
-      className="relative"
-      onKeyDown={(event) => {
-        if (event.key !== 'Escape' || !isOpen) return;
-        setOpen(false);
-        opener.current?.focus();
-      }}
-      onBlur={(event) => {
-        if (event.relatedTarget && !event.currentTarget.contains(event.relatedTarget)) {
-          setOpen(false);
-        }
-      }}
-    >
+    <div ref={around} className="relative">
       <button
         ref={opener}
         type="button"

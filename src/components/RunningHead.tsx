@@ -3,7 +3,7 @@
  * of it as a line of links.
  */
 import type { ReactNode } from 'react';
-import { Link, NavLink } from 'react-router-dom';
+import { Link, NavLink, useLocation } from 'react-router-dom';
 import { countWaiting, useDesk, useSession } from '../api/index.ts';
 
 import { paths, signInPath } from '../routes/paths.ts';
@@ -56,16 +56,18 @@ function DeskLink() {
 
 function Right() {
   const session = useSession();
+  const { pathname, search } = useLocation();
   if (!session.data) return null;
   if (!session.data.person) {
-    const here = globalThis.location.pathname + globalThis.location.search;
     return (
       <>
         <ThemeButton />
         <Link to={paths.language} className="text-ink-2 hover:text-ink py-4 no-underline">
           The language
         </Link>
-        <ActLink to={signInPath(here)}>Sign in</ActLink>
+        {!pathname.startsWith(paths.signIn) && (
+          <ActLink to={signInPath(pathname + search)}>Sign in</ActLink>
+        )}
       </>
     );
   }
@@ -91,7 +93,7 @@ export function RunningHead({ place = [], title, state, action, sections }: Runn
             className="text-label text-ink-3 desk:order-none desk:w-auto order-3 flex w-full min-w-0 flex-wrap gap-x-10 font-mono"
           >
             {place.map(({ label, to }, index) => (
-              <span key={to} className="flex min-w-0 gap-10">
+              <span key={to} className="flex min-w-0 items-baseline gap-10">
                 {index > 0 && <span aria-hidden="true">›</span>}
                 <Link to={to} className="text-ink-2 hover:text-ink py-4 break-words no-underline">
                   {label}

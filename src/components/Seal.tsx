@@ -22,7 +22,8 @@ export function SealMark({ status }: { readonly status: CheckStatus }) {
       width="16"
       height="16"
       aria-hidden="true"
-      className={classes('inline-block flex-none', COLOUR[status])}
+      // Its foot stands a little below the line of writing, as a letter's would.
+      className={classes('relative top-[3px] inline-block flex-none', COLOUR[status])}
       fill="none"
       stroke="currentColor"
       strokeWidth="1.3"
@@ -65,7 +66,8 @@ export function Seal({ status, passed, total, onOpen, isOpen }: SealProps) {
     </>
   );
   const className = classes(
-    'inline-flex min-h-28 items-center gap-[7px] font-mono text-label',
+    'inline-flex items-baseline gap-[7px] font-mono text-label whitespace-nowrap',
+    onOpen && 'min-h-28',
     COLOUR[status],
   );
   if (!onOpen) return <span className={className}>{content}</span>;

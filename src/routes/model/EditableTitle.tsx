@@ -1,5 +1,5 @@
 /** The title of a model, which those who may edit it can change where it stands. */
-import { useRef, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { renameModelSchema } from '../../../shared/contracts/models.ts';
 import type { Model } from '../../../shared/contracts/models.ts';
 import { describeFault, useRenameModel } from '../../api/index.ts';
@@ -9,7 +9,12 @@ export function EditableTitle({ model }: { readonly model: Model }) {
   const [edited, setEdited] = useState<string>();
   const [fault, setFault] = useState<string>();
   const opener = useRef<HTMLButtonElement>(null);
+  const field = useRef<HTMLInputElement>(null);
   const rename = useRenameModel(model.id);
+  const isEditing = edited !== undefined;
+  useEffect(() => {
+    if (isEditing) field.current?.select();
+  }, [isEditing]);
 
   const close = () => {
     setEdited(undefined);
@@ -56,7 +61,7 @@ export function EditableTitle({ model }: { readonly model: Model }) {
   return (
     <span className="block">
       <input
-        autoFocus
+        ref={field}
         aria-label="Title of the model"
         aria-invalid={fault ? true : undefined}
         aria-describedby={fault ? 'title-fault' : undefined}
