@@ -121,6 +121,8 @@ function FindDialog({ onClose }: { readonly onClose: () => void }) {
       />
       <ul id="found-places" role="listbox" aria-label="Found" className="mt-14">
         {found.map((place, index) => (
+          // The keys are those of the field, as the pattern of a combobox has it.
+          // eslint-disable-next-line jsx-a11y/click-events-have-key-events
           <li
             key={place.kind + place.id}
             id={`found-${place.kind}-${place.id}`}

@@ -1,33 +1,8 @@
 /** What changed in the source between two versions, line by line, with what stands around it. */
 import { useMemo } from 'react';
-import { diffLines } from 'diff';
 import { classes } from './classes.ts';
-
-interface Line {
-  readonly kind: 'kept' | 'added' | 'removed' | 'gap';
-  readonly text: string;
-}
-
-const AROUND = 2;
-
-/** The changed lines with two unchanged ones around each; longer stretches become one gap. */
-export function differenceOf(before: string, after: string): Line[] {
-  const all = diffLines(before, after).flatMap(({ value, added, removed }) =>
-    value
-      .replace(/\n$/, '')
-      .split('\n')
-      .map<Line>((text) => ({ kind: added ? 'added' : removed ? 'removed' : 'kept', text })),
-  );
-  const isNear = all.map((_, index) =>
-    all.slice(Math.max(0, index - AROUND), index + AROUND + 1).some(({ kind }) => kind !== 'kept'),
-  );
-  const lines: Line[] = [];
-  all.forEach((line, index) => {
-    if (isNear[index]) lines.push(line);
-    else if (lines.at(-1)?.kind !== 'gap') lines.push({ kind: 'gap', text: '' });
-  });
-  return lines.some(({ kind }) => kind === 'added' || kind === 'removed') ? lines : [];
-}
+import { differenceOf } from './changedLines.ts';
+import type { Line } from './changedLines.ts';
 
 const SIGN: Record<Line['kind'], string> = { kept: ' ', added: '+', removed: '−', gap: '⋯' };
 const WORD: Record<Line['kind'], string> = {
