@@ -6,7 +6,7 @@ import { useId, useMemo } from 'react';
 import { scaleLinear, scaleLog } from 'd3-scale';
 import { curveMonotoneX, line } from 'd3-shape';
 import { useElementWidth } from '../../components/useElementWidth.ts';
-import type { Isotherm, Point, Portrait } from './isotherms.ts';
+import type { Isotherm, Point, Portrait } from './portrait.ts';
 
 const DASHES = ['2 3', '7 3', '', '12 3 2 3', ''];
 const TEXT = 11;

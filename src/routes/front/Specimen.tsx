@@ -1,17 +1,14 @@
 /** The live specimen: a formulation, what follows from it, and its isotherms, as one types. */
-import { useEffect, useMemo, useState } from 'react';
+import { lazy, Suspense, useEffect, useState } from 'react';
 import { useLiveDerivation } from '../../workers/useLiveDerivation.ts';
 import { Consequences } from './Consequences.tsx';
-import { IsothermPlot } from './IsothermPlot.tsx';
-import { MOLAR_UNIT, portray, traceIsotherm } from './isotherms.ts';
-import { MovingTemperature } from './MovingTemperature.tsx';
 import { SpecimenEditor } from './SpecimenEditor.tsx';
 import { SPECIMEN } from './specimenSource.ts';
-import { useFluid } from './useFluid.ts';
 import { loadTypesetting } from '../../components/Formula.tsx';
 import { QuietButton } from '../../components/Button.tsx';
 
-const FIRST_REDUCED = 0.95;
+// The drawing comes when there is something to draw.
+const Isotherms = lazy(async () => ({ default: (await import('./Isotherms.tsx')).Isotherms }));
 
 export function Specimen() {
   const [source, setSource] = useState(SPECIMEN);
@@ -53,7 +50,9 @@ export function Specimen() {
         {derivation ? (
           <>
             <Consequences derivation={derivation} isStale={isStale} />
-            <Isotherms derivation={derivation} isStale={isStale} />
+            <Suspense fallback={<div className="mt-14 min-h-[360px]" />}>
+              <Isotherms derivation={derivation} isStale={isStale} />
+            </Suspense>
           </>
         ) : (
           <p role="status" className="text-label text-ink-3 py-22 font-mono">
@@ -61,49 +60,6 @@ export function Specimen() {
           </p>
         )}
       </section>
-    </div>
-  );
-}
-
-function Isotherms({
-  derivation,
-  isStale,
-}: {
-  readonly derivation: Parameters<typeof useFluid>[0];
-  readonly isStale: boolean;
-}) {
-  const fluid = useFluid(derivation);
-  const portrait = useMemo(() => (fluid ? portray(fluid) : undefined), [fluid]);
-  const [reduced, setReduced] = useState(FIRST_REDUCED);
-
-  const critical = portrait?.critical;
-  const temperature = reduced * (critical?.temperature ?? 300);
-  const moving = useMemo(() => {
-    if (!fluid || !portrait) return undefined;
-    const unit = critical ?? MOLAR_UNIT;
-    return {
-      label: 'moving',
-      points: traceIsotherm(fluid, temperature, portrait.xRange, unit),
-    };
-  }, [fluid, portrait, critical, temperature]);
-
-  if (!fluid) return null;
-  if (!portrait) {
-    return (
-      <p className="text-note text-ink-2 py-14">
-        No isotherm is drawn: the pressure has no values over the volumes of a fluid.
-      </p>
-    );
-  }
-  return (
-    <div className={isStale ? 'mt-14 opacity-60' : 'mt-14'}>
-      <IsothermPlot portrait={portrait} moving={moving} />
-      <MovingTemperature
-        reduced={reduced}
-        temperature={temperature}
-        critical={critical}
-        onChange={setReduced}
-      />
     </div>
   );
 }

@@ -26,6 +26,7 @@ export interface CriticalPoint {
 const SMALLEST_VOLUME = 1e-6;
 const LARGEST_VOLUME = 1;
 const VOLUMES = 240;
+const STIFFEST = 1e4;
 const LOWEST_TEMPERATURE = 1;
 const HIGHEST_TEMPERATURE = 2e4;
 const TEMPERATURES = 36;
@@ -46,8 +47,11 @@ function softest(
 ): { readonly volume: number; readonly value: number } | undefined {
   let best = -1;
   let least = Infinity;
-  for (let i = 0; i < VOLUMES; i++) {
+  // From the gas to denser states, up to where the fluid is as stiff as a packing without room:
+  // what seems to lie beyond belongs to another branch of the formula.
+  for (let i = VOLUMES - 1; i >= 0; i--) {
     const value = stiffness(fluid, temperature, volumeAt(i));
+    if (!(value < STIFFEST)) break;
     if (value < least) {
       least = value;
       best = i;

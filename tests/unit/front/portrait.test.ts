@@ -3,7 +3,7 @@ import { bracketRoot } from '../../../src/routes/front/bracketRoot.ts';
 import { findCoexistence, findSpinodal } from '../../../src/routes/front/coexistence.ts';
 import { findCriticalPoint } from '../../../src/routes/front/criticalPoint.ts';
 import type { Fluid } from '../../../src/routes/front/criticalPoint.ts';
-import { portray } from '../../../src/routes/front/isotherms.ts';
+import { portray } from '../../../src/routes/front/portrait.ts';
 
 const k = 1.380649e-23;
 const N = 6.02214076e23;

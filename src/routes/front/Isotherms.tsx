@@ -1,0 +1,52 @@
+/** The isotherms of the specimen, one of which the reader moves. */
+import { useMemo, useState } from 'react';
+import type { Derivation } from '../../../shared/contracts/derivation.ts';
+import { IsothermPlot } from './IsothermPlot.tsx';
+import { MOLAR_UNIT, portray, traceIsotherm } from './portrait.ts';
+import { MovingTemperature } from './MovingTemperature.tsx';
+import { useFluid } from './useFluid.ts';
+
+const FIRST_REDUCED = 0.95;
+
+export function Isotherms({
+  derivation,
+  isStale,
+}: {
+  readonly derivation: Derivation;
+  readonly isStale: boolean;
+}) {
+  const fluid = useFluid(derivation);
+  const portrait = useMemo(() => (fluid ? portray(fluid) : undefined), [fluid]);
+  const [reduced, setReduced] = useState(FIRST_REDUCED);
+
+  const critical = portrait?.critical;
+  const temperature = reduced * (critical?.temperature ?? 300);
+  const moving = useMemo(() => {
+    if (!fluid || !portrait) return undefined;
+    const unit = critical ?? MOLAR_UNIT;
+    return {
+      label: 'moving',
+      points: traceIsotherm(fluid, temperature, portrait.xRange, unit),
+    };
+  }, [fluid, portrait, critical, temperature]);
+
+  if (!fluid) return null;
+  if (!portrait) {
+    return (
+      <p className="text-note text-ink-2 py-14">
+        No isotherm is drawn: the pressure has no values over the volumes of a fluid.
+      </p>
+    );
+  }
+  return (
+    <div className={isStale ? 'mt-14 opacity-60' : 'mt-14'}>
+      <IsothermPlot portrait={portrait} moving={moving} />
+      <MovingTemperature
+        reduced={reduced}
+        temperature={temperature}
+        critical={critical}
+        onChange={setReduced}
+      />
+    </div>
+  );
+}
