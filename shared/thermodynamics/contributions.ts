@@ -7,6 +7,7 @@ import type { Expression, SymbolNode } from '../algebra/expression.ts';
 import { abbreviationsOf, symbolsOf } from '../algebra/traverse.ts';
 import type { DeclaredQuantity, Formulation } from '../language/formulation.ts';
 import { equalDimensions } from '../units/dimension.ts';
+import type { Notation } from './notation.ts';
 import { MASS } from './catalogue/dimensions.ts';
 import type { Surroundings } from './catalogue/index.ts';
 
@@ -44,26 +45,42 @@ export function sizesOf(surroundings: Surroundings): ReadonlySet<Expression> {
 }
 
 /**
- * The terms of ln Q by label, in the order in which the labels first appear. A label is the
+ * The terms of ln Q by label, in the order in which a reader meets them. A label is the
  * description of the parameter or abbreviation that the term contains; `translation` for the
- * thermal wavelength and what belongs to it; else the term itself, written by `write`.
+ * thermal wavelength and what belongs to it; else the term itself as text.
  */
 export function groupTerms(
   formulation: Formulation,
   surroundings: Surroundings,
-  write: (term: Expression) => string,
+  notation: Pick<Notation, 'text' | 'inOrder'>,
 ): TermGroup[] {
   const sizes = sizesOf(surroundings);
-  const terms = termsOf(formulation.lnPartitionFunction, sizes);
+  const terms = notation.inOrder(termsOf(formulation.lnPartitionFunction, sizes));
   const naming = namingOf(formulation, surroundings, terms, sizes);
   const groups = new Map<string, Expression[]>();
   for (const term of terms) {
-    const label = labelOf(term, naming) ?? write(term);
+    const label = labelOf(term, naming) ?? notation.text(term);
     const group = groups.get(label);
     if (group) group.push(term);
     else groups.set(label, [term]);
   }
-  return [...groups].map(([label, members]) => ({ label, f: sum(members) }));
+  const place = (members: readonly Expression[]): number => placeOf(members, naming);
+  return [...groups]
+    .sort(([, a], [, b]) => place(a) - place(b))
+    .map(([label, members]) => ({ label, f: sum(members) }));
+}
+
+/** What has no parameter comes first, then the parameters as the author's products name them. */
+function placeOf(members: readonly Expression[], naming: Naming): number {
+  const { nameOrder } = naming.formulation;
+  let first = -1;
+  for (const { symbol, name } of naming.quantities) {
+    if (naming.masses.has(symbol) || !members.some((term) => symbolsOf(term).has(symbol))) continue;
+    const place = nameOrder.indexOf(name);
+    const known = place < 0 ? nameOrder.length : place;
+    if (first < 0 || known < first) first = known;
+  }
+  return first;
 }
 
 interface Naming {

@@ -1,6 +1,7 @@
 /** From a source text to everything that follows from it, as plain JSON. */
 import { BudgetExceeded, withBudget } from '../algebra/budget.ts';
 import { zero } from '../algebra/construct.ts';
+import type { Expression } from '../algebra/expression.ts';
 import { NotDifferentiable } from '../algebra/differentiate.ts';
 import * as Q from '../algebra/rational.ts';
 import type { Derivation, DerivedProperty } from '../contracts/derivation.ts';
@@ -12,7 +13,7 @@ import { unitOf, unitPerMole, type Entry } from './catalogue/index.ts';
 import { decideClaim } from './claims/decide.ts';
 import { groupTerms } from './contributions.ts';
 import { findings } from './findings.ts';
-import { formsOf, inForm, type Form } from './forms.ts';
+import { formsOf, inForm, perMole, type Form } from './forms.ts';
 import { createModel, type Model } from './model.ts';
 import { createNotation, type Notation } from './notation.ts';
 import { notesOf } from './notes.ts';
@@ -137,7 +138,7 @@ function assemble(
   const calculator = createCalculator(model);
   const isExtensive = model.isExtensive();
   const forms = isExtensive ? formsOf(model) : [];
-  const groups = groupTerms(formulation, surroundings, notation.text).map(({ label, f }) => ({
+  const groups = groupTerms(formulation, surroundings, notation).map(({ label, f }) => ({
     label,
     share: createModel(formulation, { f, surroundings, shorten: (e) => e }),
   }));
@@ -223,24 +224,38 @@ function deriveProperty(
     symbolTex: notation.tex(name),
     name: entry.name,
     unit: unitOf(entry.dimension),
-    definitionTex: notation.tex(entry.definition),
+    definitionTex: notation.definitionTex(entry.definition),
     tex: notation.tex(value),
     text: notation.text(value),
     tree: notation.json(value),
-    forms: forms.map((form) => {
-      const inside = inForm(value, form);
-      const isMolar = form.form === 'molar';
-      return {
-        form: form.form,
-        symbolTex: entry.isExtensive ? notation.perAmountTex(name, form.form) : notation.tex(name),
-        unit: isMolar && entry.isExtensive ? unitPerMole(entry.dimension) : unitOf(entry.dimension),
-        tex: notation.tex(inside),
-        text: notation.text(inside),
-      };
-    }),
+    forms: forms.map((form) => formOf(entry, value, form, notation)),
     contributions: entry.isLinear ? contributionsTo(model, entry, groups, notation) : [],
     steps: trailOf(model, entry, notation),
     notes: notesOf(model, entry, value, notation),
+  };
+}
+
+function formOf(
+  entry: Entry,
+  value: Expression,
+  form: Form,
+  notation: Notation,
+): DerivedProperty['forms'][number] {
+  const name = notation.nameOf(entry.symbol);
+  const isMolar = form.form === 'molar';
+  const isOfMolecule = isMolar && entry.isPerMolecule === true;
+  const inside = inForm(value, form, isOfMolecule ? perMole : undefined);
+  const isPerAmount = entry.isExtensive || isOfMolecule;
+  return {
+    form: form.form,
+    symbolTex: entry.isExtensive
+      ? notation.perAmountTex(name, form.form)
+      : isOfMolecule
+        ? notation.timesAvogadroTex(name)
+        : notation.tex(name),
+    unit: isMolar && isPerAmount ? unitPerMole(entry.dimension) : unitOf(entry.dimension),
+    tex: notation.formTex(inside),
+    text: notation.formText(inside),
   };
 }
 

@@ -1,5 +1,5 @@
 /** The values of properties at one state, in SI units. */
-import type { Expression, Relation } from '../algebra/expression.ts';
+import type { Expression } from '../algebra/expression.ts';
 import { NotDifferentiable } from '../algebra/differentiate.ts';
 import * as Q from '../algebra/rational.ts';
 import type { Diagnostic } from '../language/diagnostic.ts';
@@ -150,11 +150,4 @@ function lookUp(model: Model, name: string): { expression: Expression; unit: str
   if (named) return { expression: named.expression, unit: unitOf(named.dimension) };
   const quantity = quantities.find((q) => q.name === name);
   return quantity && { expression: quantity.symbol, unit: unitOf(quantity.dimension) };
-}
-
-/** A relation of the domain that does not hold, with both sides. */
-export interface Violation {
-  readonly relation: Relation;
-  readonly left: number;
-  readonly right: number;
 }

@@ -6,9 +6,21 @@
  * N_Av molecules in the volume V_m, with k N_Av = R and parameters as the author reports them per
  * mole. No other algebra is needed.
  */
-import { abbreviation, divide, multiply, one, product, symbol } from '../algebra/construct.ts';
+import {
+  abbreviation,
+  divide,
+  multiply,
+  number,
+  one,
+  power,
+  product,
+  splitPower,
+  sum,
+  symbol,
+} from '../algebra/construct.ts';
 import type { Expression } from '../algebra/expression.ts';
-import { abbreviationsOf, dependsOn, substitute } from '../algebra/traverse.ts';
+import * as Q from '../algebra/rational.ts';
+import { abbreviationsOf, dependsOn, rebuild, substitute } from '../algebra/traverse.ts';
 import type { FormName } from '../contracts/derivation.ts';
 import type { Formulation, Report } from '../language/formulation.ts';
 import type { Model } from './model.ts';
@@ -105,7 +117,37 @@ function protect(
   return all;
 }
 
-/** The expression in the form. */
-export function inForm(e: Expression, form: Form): Expression {
-  return substitute(e, form.replacements);
+/** The expression in the form; `times` is by what a property of one molecule is multiplied. */
+export function inForm(e: Expression, form: Form, times: Expression = one): Expression {
+  const replaced = substitute(e, form.replacements);
+  if (form.form !== 'molar') return replaced;
+  return multiply(times, takeOutAvogadro(replaced));
+}
+
+/** By what a property of one molecule is multiplied to be one of a mole. */
+export const perMole: Expression = avogadro;
+
+/**
+ * Sums with their common power of N_Av in front: R T V³/N_Av − 2 a (V − b)²/N_Av cancels only so
+ * against what stands outside.
+ */
+function takeOutAvogadro(e: Expression): Expression {
+  if (e.kind === 'abbreviation') return e;
+  const inside = rebuild(e, takeOutAvogadro);
+  if (inside.kind !== 'sum' || !Q.isZero(inside.constant)) return inside;
+  const exponents = inside.terms.map(avogadroExponent);
+  const [first, ...rest] = exponents;
+  if (first === undefined) return inside;
+  const least = rest.reduce((a, b) => (Q.compare(a, b) <= 0 ? a : b), first);
+  if (Q.isZero(least)) return inside;
+  const common = power(avogadro, number(least));
+  return multiply(common, sum(inside.terms.map((term) => divide(term, common))));
+}
+
+function avogadroExponent(term: Expression): Q.Rational {
+  for (const factor of term.kind === 'product' ? term.factors : [term]) {
+    const { base, exponent } = splitPower(factor);
+    if (base === avogadro && exponent.kind === 'number') return exponent.value;
+  }
+  return Q.ZERO;
 }

@@ -2,12 +2,24 @@
  * A model: a checked formulation together with the properties that follow from it, each worked out
  * when it is first asked for and remembered.
  */
-import { sum } from '../algebra/construct.ts';
-import type { Expression, SymbolNode } from '../algebra/expression.ts';
+import { subtract, sum, symbol } from '../algebra/construct.ts';
+import {
+  childrenOf,
+  type Expression,
+  type Relation,
+  type SymbolNode,
+} from '../algebra/expression.ts';
+import * as Q from '../algebra/rational.ts';
 import { Simplifier } from '../algebra/simplify.ts';
-import { rebuild } from '../algebra/traverse.ts';
+import { rebuild, substitute } from '../algebra/traverse.ts';
 import type { Formulation } from '../language/formulation.ts';
-import { entriesFor, surroundingsOf, type Entry, type Surroundings } from './catalogue/index.ts';
+import {
+  entriesFor,
+  isProperty,
+  surroundingsOf,
+  type Entry,
+  type Surroundings,
+} from './catalogue/index.ts';
 import { homogeneityOf } from './homogeneity.ts';
 import { NoSuchDerivative, partialDerivative } from './partialDerivative.ts';
 
@@ -62,7 +74,13 @@ export function createModel(
   const simplifier = shorten
     ? undefined
     : new Simplifier({ known: [f], dominant: dominantOf(surroundings) });
-  const finish = shorten ?? ((e: Expression) => simplifier?.simplify(e) ?? e);
+  const shield = new Map<Expression, Expression>();
+  formulation.domain.forEach((relation, i) => {
+    const positive = positivePart(relation);
+    if (positive) shield.set(positive, symbol(`positive quantity ${i}`, { positive: true }));
+  });
+  const finish =
+    shorten ?? ((e: Expression) => takeOutOfRoots(simplifier?.simplify(e) ?? e, shield));
   const entries = entriesFor(surroundings, formulation);
   const byName = new Map(entries.map((entry) => [entry.symbol, entry]));
   const declared = declaredNames(formulation);
@@ -100,7 +118,7 @@ export function createModel(
     if (e.kind === 'symbol') {
       const variable = formulation.variables.find(({ name }) => name === e.name);
       if (variable) return variable.symbol;
-      if (ofCatalogue ? e.positive : declared.has(e.name)) return e;
+      if (ofCatalogue ? !isProperty(e) : declared.has(e.name)) return e;
       return byName.has(e.name) ? worked(e.name).value : e;
     }
     if (e.kind === 'call' && e.name === 'partial') {
@@ -151,6 +169,28 @@ export function createModel(
     simplify: finish,
   };
   return model;
+}
+
+/** The sum that a relation of the domain keeps above zero: V − N b of V > N b. */
+function positivePart({ left, sign, right }: Relation): Expression | undefined {
+  if (sign === '=') return undefined;
+  const difference = sign === '>' || sign === '>=' ? subtract(left, right) : subtract(right, left);
+  return difference.kind === 'sum' ? difference : undefined;
+}
+
+/** √((V − N b)² x) is (V − N b) √x, since V − N b is positive in the domain. */
+function takeOutOfRoots(e: Expression, shield: ReadonlyMap<Expression, Expression>): Expression {
+  if (shield.size === 0 || !hasRoot(e)) return e;
+  const back = new Map([...shield].map(([sum, stand]) => [stand, sum]));
+  return substitute(substitute(e, shield), back);
+}
+
+function hasRoot(e: Expression): boolean {
+  if (e.kind === 'abbreviation') return false;
+  if (e.kind === 'power' && e.exponent.kind === 'number' && !Q.isInteger(e.exponent.value)) {
+    return true;
+  }
+  return childrenOf(e).some(hasRoot);
 }
 
 /** The extent is what is large: V − N b is written so, not as −(N b − V). */

@@ -26,8 +26,9 @@ export function trailOf(model: Model, entry: Entry, notation: Notation): Derivat
     const tex = `${leftSide} = ${rightSide}`;
     if (steps.at(-1)?.tex !== tex) steps.push({ rule, tex });
   };
-  say('definition', left, notation.tex(entry.definition));
-  if (entry.working) say(entry.working.rule, left, notation.tex(entry.working.expression));
+  say('definition', left, notation.definitionTex(entry.definition));
+  if (entry.working)
+    say(entry.working.rule, left, notation.definitionTex(entry.working.expression));
   const chosen = entry.working?.expression ?? entry.definition;
 
   const derivatives = derivativesIn(chosen);

@@ -11,7 +11,7 @@
  * terms of ln Q, and for the numerical check that works from values alone.
  */
 import { call, symbol } from '../../algebra/construct.ts';
-import type { Expression } from '../../algebra/expression.ts';
+import type { Expression, SymbolNode } from '../../algebra/expression.ts';
 import type { Dimension } from '../../units/dimension.ts';
 
 export interface Entry {
@@ -22,6 +22,8 @@ export interface Entry {
   readonly dimension: Dimension;
   /** True where the property doubles when the system does. */
   readonly isExtensive: boolean;
+  /** True for a chemical potential: molar, it is multiplied by Avogadro's constant. */
+  readonly isPerMolecule?: boolean;
   /** True where the property is linear in the logarithm of the partition function. */
   readonly isLinear: boolean;
   readonly definition: Expression;
@@ -32,9 +34,17 @@ export interface Entry {
   readonly working?: { readonly rule: string; readonly expression: Expression };
 }
 
-/** The property of this name, as definitions and claims write it. */
+/** Above zero wherever a state is stable, so that roots of it may be taken apart. */
+const POSITIVE: ReadonlySet<string> = new Set(['kappa_S']);
+
+/** The property of this name, as definitions write it. */
 export function property(name: string): Expression {
-  return symbol(name);
+  return symbol(name, { positive: POSITIVE.has(name) });
+}
+
+/** True for a symbol that `property` made; a natural variable or a mass is another node. */
+export function isProperty(e: SymbolNode): boolean {
+  return property(e.name) === e;
 }
 
 /** (∂of/∂by) at constant `held`. */

@@ -6,7 +6,7 @@ import { responseEntries } from './responses.ts';
 import type { Surroundings } from './surroundings.ts';
 
 export type { Entry } from './entry.ts';
-export { partialOf, property } from './entry.ts';
+export { isProperty, partialOf, property } from './entry.ts';
 export { surroundingsOf, type Surroundings } from './surroundings.ts';
 export { AMOUNT, ENTROPY, unitOf, unitPerMole } from './dimensions.ts';
 

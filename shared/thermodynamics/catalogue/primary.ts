@@ -56,6 +56,7 @@ export function primaryEntries(s: Surroundings): Entry[] {
       name,
       dimension,
       isExtensive,
+      isPerMolecule: family === 'mu',
       isLinear: linear.includes(family),
       definition,
     });
@@ -111,7 +112,7 @@ function nameOfExtent({ extentDimension, naturals }: Surroundings): string {
 
 /** Which properties are linear in the logarithm, so that its terms have shares in them. */
 const LINEAR: Readonly<Record<Surroundings['ensemble'], readonly string[]>> = {
-  canonical: ['p', 'U', 'S', 'A', 'H', 'G', 'mu', 'response'],
+  canonical: ['p', 'U', 'S', 'A', 'H', 'G', 'Omega', 'mu', 'response'],
   'grand canonical': ['p', 'N', 'U', 'S', 'A', 'H', 'G', 'Omega', 'response'],
   'isothermal-isobaric': ['extent', 'U', 'S', 'A', 'H', 'G', 'mu', 'response'],
   microcanonical: ['S'],

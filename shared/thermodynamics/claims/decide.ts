@@ -9,7 +9,7 @@ import { NotDifferentiable } from '../../algebra/differentiate.ts';
 import type { CheckStatus, ClaimResult } from '../../contracts/derivation.ts';
 import type { Claim } from '../../language/formulation.ts';
 import { BASE_UNITS } from '../../units/dimension.ts';
-import type { Calculator } from '../calculator.ts';
+import { holds, type Calculator } from '../calculator.ts';
 import { unitOf } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import type { Notation } from '../notation.ts';
@@ -252,8 +252,8 @@ function decideInequality(
   };
   const difference = subtract(relation.left, relation.right);
   if (difference.kind === 'number') {
-    const holds = compare(Q.toNumber(difference.value), sign);
-    return { status: holds ? 'passed' : 'failed', method: 'symbolically', detail: '' };
+    const isTrue = holds(Q.toNumber(difference.value), sign, 0);
+    return { status: isTrue ? 'passed' : 'failed', method: 'symbolically', detail: '' };
   }
   const stateAt = stateGenerator(model, claim.ranges, calculator);
   let tried = 0;
@@ -272,7 +272,7 @@ function decideInequality(
       continue;
     }
     tried++;
-    if (!compare(left - right, sign)) {
+    if (!holds(left, sign, right)) {
       return {
         status: 'failed',
         method: `at ${tried} ${tried === 1 ? 'state' : 'states'}`,
@@ -296,19 +296,4 @@ function decideInequality(
     method: `at ${tried} states`,
     detail: remarks.length > 0 ? sentence(remarks.join('; ')) : '',
   };
-}
-
-function compare(difference: number, sign: Relation['sign']): boolean {
-  switch (sign) {
-    case '<':
-      return difference < 0;
-    case '<=':
-      return difference <= 0;
-    case '=':
-      return difference === 0;
-    case '>=':
-      return difference >= 0;
-    case '>':
-      return difference > 0;
-  }
 }

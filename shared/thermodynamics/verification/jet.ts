@@ -6,6 +6,7 @@
  */
 import type { Expression, SymbolNode } from '../../algebra/expression.ts';
 import * as Q from '../../algebra/rational.ts';
+import { isProperty } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import {
   ZERO,
@@ -79,7 +80,7 @@ export class JetReader {
             gradient: naturals.map((_, i) => (i === index ? { value: 1, error: 0 } : ZERO)),
           };
         }
-        if (!e.positive && this.model.entry(e.name)) return this.dualOf(e.name);
+        if (isProperty(e) && this.model.entry(e.name)) return this.dualOf(e.name);
         if (value === undefined) throw new RangeError(`no value of ${e.name}`);
         return this.constant(exactly(value));
       }

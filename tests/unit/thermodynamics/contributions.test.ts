@@ -15,10 +15,11 @@ import { equal } from '../../../shared/algebra/equality.ts';
 import { surroundingsOf } from '../../../shared/thermodynamics/catalogue/index.ts';
 import { groupTerms } from '../../../shared/thermodynamics/contributions.ts';
 import { createModel } from '../../../shared/thermodynamics/model.ts';
+import { createNotation } from '../../../shared/thermodynamics/notation.ts';
 import { a, fluid, k, Lambda, N, natural, stated, T, V } from './fixtures.ts';
 
 function labels(formulation = fluid()): string[] {
-  return groupTerms(formulation, surroundingsOf(formulation), () => 'a term of its own').map(
+  return groupTerms(formulation, surroundingsOf(formulation), createNotation(formulation)).map(
     ({ label }) => label,
   );
 }
@@ -64,7 +65,7 @@ describe('the terms of ln Q', () => {
   it('have shares in a linear property that add up to it', () => {
     const formulation = fluid();
     const whole = createModel(formulation);
-    const groups = groupTerms(formulation, whole.surroundings, () => '');
+    const groups = groupTerms(formulation, whole.surroundings, createNotation(formulation));
     for (const entry of whole.entries.filter(({ isLinear }) => isLinear)) {
       const shares = groups.map(({ f }) =>
         createModel(formulation, { f, surroundings: whole.surroundings, shorten: (e) => e }).worked(

@@ -1,0 +1,99 @@
+/** Values of expressions of a model at states of it. */
+import { number } from '../algebra/construct.ts';
+import type { Expression, Relation } from '../algebra/expression.ts';
+import * as Q from '../algebra/rational.ts';
+import { symbolsOf } from '../algebra/traverse.ts';
+import { compile, evaluatePrecisely } from '../numerics/index.ts';
+import type { Entry } from './catalogue/index.ts';
+import type { Model } from './model.ts';
+import { constantNumbersOf } from './numbers.ts';
+import type { State } from './sampling.ts';
+
+/** A relation of the domain that does not hold, with both sides. */
+export interface Violation {
+  readonly relation: Relation;
+  readonly left: number;
+  readonly right: number;
+}
+
+export interface Calculator {
+  /** The value in doubles; NaN where there is none. The expression is compiled once. */
+  value(e: Expression, state: State): number;
+  /** The first relation of the domain that the state breaks. */
+  violated(state: State): Violation | undefined;
+  isInDomain(state: State): boolean;
+  /** The state together with the constants, by name. */
+  valuesAt(state: State): ReadonlyMap<string, number>;
+}
+
+/** A calculator with the declared values, or others where `overrides` has them (SI units). */
+export function createCalculator(
+  model: Model,
+  overrides: Readonly<Record<string, number>> = {},
+): Calculator {
+  const constants = constantNumbersOf(model.formulation);
+  for (const [name, value] of Object.entries(overrides)) constants.set(name, value);
+  const compiled = new Map<Expression, (values: ReadonlyMap<string, number>) => number>();
+  const valuesAt = (state: State): ReadonlyMap<string, number> => new Map([...constants, ...state]);
+  const value = (e: Expression, state: State): number => {
+    let code = compiled.get(e);
+    if (!code) compiled.set(e, (code = compileByName(e)));
+    return code(valuesAt(state));
+  };
+  const violated = (state: State): Violation | undefined => {
+    for (const [name, x] of state) {
+      const variable = model.surroundings.naturals.find((v) => v.name === name);
+      const mayBeNegative = variable?.role === 'chemical potential' || variable?.role === 'field';
+      if (variable && !mayBeNegative && !(x > 0)) {
+        const relation: Relation = { left: variable.symbol, sign: '>', right: ZERO };
+        return { relation, left: x, right: 0 };
+      }
+    }
+    for (const relation of model.formulation.domain) {
+      const left = value(relation.left, state);
+      const right = value(relation.right, state);
+      if (!holds(left, relation.sign, right)) return { relation, left, right };
+    }
+    return undefined;
+  };
+  return { value, violated, isInDomain: (state) => violated(state) === undefined, valuesAt };
+}
+
+const ZERO: Expression = number(Q.ZERO);
+
+function compileByName(e: Expression): (values: ReadonlyMap<string, number>) => number {
+  const symbols = [...symbolsOf(e)];
+  const code = compile(
+    [e],
+    symbols.map(({ name }) => name),
+  );
+  return (values) => code(symbols.map(({ name }) => values.get(name) ?? NaN))[0] ?? NaN;
+}
+
+/** Whether left (sign) right. */
+export function holds(left: number, sign: Relation['sign'], right: number): boolean {
+  switch (sign) {
+    case '<':
+      return left < right;
+    case '<=':
+      return left <= right;
+    case '=':
+      return left === right;
+    case '>=':
+      return left >= right;
+    case '>':
+      return left > right;
+  }
+}
+
+/** The value worked out to thirty digits and rounded once, so that nothing cancels away. */
+export function preciseValue(e: Expression, values: ReadonlyMap<string, number>): number {
+  return Number(evaluatePrecisely(e, values));
+}
+
+/** The value of a property of the model at a state, worked out precisely. */
+export function preciseCalculator(model: Model): (entry: Entry, state: State) => number {
+  const constants = constantNumbersOf(model.formulation);
+  return (entry, state) =>
+    preciseValue(model.worked(entry.symbol).value, new Map([...constants, ...state]));
+}
