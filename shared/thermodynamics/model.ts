@@ -2,16 +2,10 @@
  * A model: a checked formulation together with the properties that follow from it, each worked out
  * when it is first asked for and remembered.
  */
-import { subtract, sum, symbol } from '../algebra/construct.ts';
-import {
-  childrenOf,
-  type Expression,
-  type Relation,
-  type SymbolNode,
-} from '../algebra/expression.ts';
-import * as Q from '../algebra/rational.ts';
+import { sum } from '../algebra/construct.ts';
+import type { Expression, SymbolNode } from '../algebra/expression.ts';
 import { Simplifier } from '../algebra/simplify.ts';
-import { rebuild, substitute } from '../algebra/traverse.ts';
+import { rebuild } from '../algebra/traverse.ts';
 import type { Formulation } from '../language/formulation.ts';
 import {
   entriesFor,
@@ -22,6 +16,7 @@ import {
 } from './catalogue/index.ts';
 import { homogeneityOf } from './homogeneity.ts';
 import { NoSuchDerivative, partialDerivative } from './partialDerivative.ts';
+import { shieldOf, takeOutOfRoots } from './roots.ts';
 
 export interface Worked {
   /** By the definition, canonical only: what the trail shows before it is put together. */
@@ -74,11 +69,7 @@ export function createModel(
   const simplifier = shorten
     ? undefined
     : new Simplifier({ known: [f], dominant: dominantOf(surroundings) });
-  const shield = new Map<Expression, Expression>();
-  formulation.domain.forEach((relation, i) => {
-    const positive = positivePart(relation);
-    if (positive) shield.set(positive, symbol(`positive quantity ${i}`, { positive: true }));
-  });
+  const shield = shieldOf(formulation.domain);
   const finish =
     shorten ?? ((e: Expression) => takeOutOfRoots(simplifier?.simplify(e) ?? e, shield));
   const entries = entriesFor(surroundings, formulation);
@@ -169,28 +160,6 @@ export function createModel(
     simplify: finish,
   };
   return model;
-}
-
-/** The sum that a relation of the domain keeps above zero: V − N b of V > N b. */
-function positivePart({ left, sign, right }: Relation): Expression | undefined {
-  if (sign === '=') return undefined;
-  const difference = sign === '>' || sign === '>=' ? subtract(left, right) : subtract(right, left);
-  return difference.kind === 'sum' ? difference : undefined;
-}
-
-/** √((V − N b)² x) is (V − N b) √x, since V − N b is positive in the domain. */
-function takeOutOfRoots(e: Expression, shield: ReadonlyMap<Expression, Expression>): Expression {
-  if (shield.size === 0 || !hasRoot(e)) return e;
-  const back = new Map([...shield].map(([sum, stand]) => [stand, sum]));
-  return substitute(substitute(e, shield), back);
-}
-
-function hasRoot(e: Expression): boolean {
-  if (e.kind === 'abbreviation') return false;
-  if (e.kind === 'power' && e.exponent.kind === 'number' && !Q.isInteger(e.exponent.value)) {
-    return true;
-  }
-  return childrenOf(e).some(hasRoot);
 }
 
 /** The extent is what is large: V − N b is written so, not as −(N b − V). */
