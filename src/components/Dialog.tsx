@@ -37,7 +37,7 @@ export function Dialog({ title, onClose, children }: DialogProps) {
     <dialog
       ref={element}
       aria-labelledby={id}
-      className="border-rule bg-sheet text-ink m-auto mt-[12vh] w-[min(640px,calc(100%-32px))] rounded border p-0"
+      className="border-rule bg-sheet text-ink text-body m-auto mt-[12vh] w-[min(640px,calc(100%-32px))] rounded border p-0 font-serif"
     >
       <div className="px-22 pt-14 pb-22">
         <div className="mb-14 flex items-baseline gap-14">

@@ -14,7 +14,7 @@ const WORD: Record<Line['kind'], string> = {
 const LOOK: Record<Line['kind'], string> = {
   kept: 'text-ink-3',
   added: 'bg-ultramarine-wash text-ink',
-  removed: 'text-ink-2 line-through decoration-ink-3',
+  removed: 'bg-hair text-ink-2',
   gap: 'text-ink-3',
 };
 

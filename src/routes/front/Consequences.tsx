@@ -18,7 +18,12 @@ export function Consequences({
     derivation.properties.filter((property) => property.symbol === symbol),
   );
   return (
-    <div className={classes('transition-opacity duration-[120ms]', isStale && 'opacity-60')}>
+    <div
+      className={classes(
+        'transition-opacity duration-[120ms]', // At 62 % ink still has the contrast of text; lighter inks would not.
+        isStale && '[&_*]:!text-ink opacity-[0.62]',
+      )}
+    >
       <dl>
         {shown.map((property) => (
           <div

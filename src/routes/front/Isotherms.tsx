@@ -39,8 +39,10 @@ export function Isotherms({
     );
   }
   return (
-    <div className={isStale ? 'mt-14 opacity-60' : 'mt-14'}>
-      <IsothermPlot portrait={portrait} moving={moving} />
+    <div className="mt-14">
+      <div className={isStale ? 'opacity-[0.62]' : undefined}>
+        <IsothermPlot portrait={portrait} moving={moving} />
+      </div>
       <MovingTemperature
         reduced={reduced}
         temperature={temperature}

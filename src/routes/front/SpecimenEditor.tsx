@@ -6,7 +6,6 @@ import type { Diagnostic } from '../../../shared/language/diagnostic.ts';
 import { Fragment } from 'react';
 import { classes } from '../../components/classes.ts';
 import { sourceLines } from '../../components/sourceParts.ts';
-import { TextButton } from '../../components/Button.tsx';
 import { markFaults } from './markFaults.ts';
 
 interface SpecimenEditorProps {
@@ -15,8 +14,9 @@ interface SpecimenEditorProps {
   readonly onChange: (source: string) => void;
 }
 
+/** What decides where a line wraps; the two paddings below differ by the room for the focus ring. */
 const TEXT =
-  'pl-26 font-mono text-[14px] leading-[1.85] break-words whitespace-pre-wrap desk:pl-38 desk:text-[15px]';
+  'font-mono text-[14px] leading-[1.85] break-words whitespace-pre-wrap desk:text-[15px]';
 
 /** The source with the edits of a repair made. */
 function mend(source: string, repair: Diagnostic['repairs'][number]): string {
@@ -38,25 +38,31 @@ export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditor
   return (
     <div>
       <div className="relative">
-        <textarea
-          aria-label="Formulation"
-          aria-describedby="specimen-faults"
-          spellCheck={false}
-          autoCapitalize="off"
-          autoComplete="off"
-          autoCorrect="off"
-          value={source}
-          onChange={(event) => onChange(event.target.value)}
-          className={classes(
-            TEXT,
-            'caret-ink absolute inset-0 h-full w-full resize-none overflow-hidden bg-transparent text-transparent -outline-offset-2',
-          )}
-        />
+        <div className="absolute -inset-x-8 -inset-y-6">
+          <textarea
+            aria-label="Formulation"
+            aria-describedby="specimen-faults"
+            spellCheck={false}
+            autoCapitalize="off"
+            autoComplete="off"
+            autoCorrect="off"
+            value={source}
+            onChange={(event) => onChange(event.target.value)}
+            className={classes(
+              TEXT,
+              'caret-ink desk:pl-46 h-full w-full resize-none overflow-hidden rounded bg-transparent py-6 pr-8 pl-34 text-transparent',
+            )}
+          />
+        </div>
         <div aria-hidden="true" className="text-ink pointer-events-none relative">
           {lines.map((parts, index) => (
             <div
               key={index}
-              className={classes(TEXT, 'relative', faultyLines.has(index + 1) && 'fault-line')}
+              className={classes(
+                TEXT,
+                'desk:pl-38 relative pl-26',
+                faultyLines.has(index + 1) && 'fault-line',
+              )}
             >
               <span className="text-label text-ink-3 absolute left-0 leading-[2.1]">
                 {index + 1}
@@ -98,13 +104,14 @@ export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditor
             </b>{' '}
             {fault.message} {fault.hint}
             {fault.repairs.map((repair) => (
-              <TextButton
+              <button
                 key={repair.title}
+                type="button"
                 onClick={() => onChange(mend(source, repair))}
-                className="border-cinnabar text-cinnabar ml-8 border no-underline"
+                className="border-cinnabar text-label text-cinnabar ml-8 min-h-28 rounded border px-8"
               >
                 {repair.title}
-              </TextButton>
+              </button>
             ))}
           </li>
         ))}
