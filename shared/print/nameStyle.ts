@@ -126,11 +126,7 @@ export function nameStyle(nameOrder: readonly string[] = []): NameStyle {
       const rank = ranks.get(name);
       if (rank !== undefined) return rank;
       const standard = DEFAULT_ORDER.indexOf(name);
-      return standard >= 0
-        ? behind + standard
-        : standard === -1 && name === 'pi'
-          ? 0
-          : behind - 0.5;
+      return standard >= 0 ? behind + standard : 0.5;
     },
   };
 }

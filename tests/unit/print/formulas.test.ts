@@ -7,7 +7,7 @@ import { fromJson, nameStyle, toJson, toTex, toText } from '../../../shared/prin
 import { randomExpression } from '../algebra/randomExpression.ts';
 import { a, free, k, Lambda, lnQ, N, T, V } from '../algebra/vanDerWaals.ts';
 
-const style = nameStyle(['a', 'N', 'b', 'k', 'T', 'V']);
+const style = nameStyle(['m', 'a', 'N', 'b', 'Lambda', 'k', 'T', 'V']);
 const x = C.symbol('x', { positive: true });
 const theta = C.symbol('Theta_E', { positive: true });
 

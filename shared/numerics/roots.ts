@@ -1,0 +1,62 @@
+/** Zeros of functions of one real variable. */
+
+/**
+ * A zero of f between a and b, where f has opposite signs, by R. P. Brent's method (Algorithms for
+ * Minimization without Derivatives, 1973, ch. 4); undefined where the signs are equal.
+ */
+export function brent(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  tolerance = 0,
+): number | undefined {
+  let [left, right] = [a, b];
+  let [fLeft, fRight] = [f(left), f(right)];
+  if (fLeft === 0) return left;
+  if (fRight === 0) return right;
+  if (!(fLeft * fRight < 0)) return undefined;
+  let [other, fOther] = [left, fLeft];
+  let step = right - left;
+  let before = step;
+  for (let i = 0; i < 200; i++) {
+    if (Math.abs(fOther) < Math.abs(fRight)) {
+      [left, right, other] = [right, other, right];
+      [fLeft, fRight, fOther] = [fRight, fOther, fRight];
+    }
+    const precision = 2 * Number.EPSILON * Math.abs(right) + tolerance / 2;
+    const middle = (other - right) / 2;
+    if (Math.abs(middle) <= precision || fRight === 0) return right;
+    if (Math.abs(before) < precision || Math.abs(fLeft) <= Math.abs(fRight)) {
+      step = before = middle;
+    } else {
+      const s = fRight / fLeft;
+      let p: number;
+      let q: number;
+      if (left === other) {
+        p = 2 * middle * s;
+        q = 1 - s;
+      } else {
+        const r = fRight / fOther;
+        const t = fLeft / fOther;
+        p = s * (2 * middle * t * (t - r) - (right - left) * (r - 1));
+        q = (t - 1) * (r - 1) * (s - 1);
+      }
+      if (p > 0) q = -q;
+      else p = -p;
+      if (2 * p < Math.min(3 * middle * q - Math.abs(precision * q), Math.abs(before * q))) {
+        before = step;
+        step = p / q;
+      } else {
+        step = before = middle;
+      }
+    }
+    [left, fLeft] = [right, fRight];
+    right += Math.abs(step) > precision ? step : middle > 0 ? precision : -precision;
+    fRight = f(right);
+    if (fRight * fOther > 0) {
+      [other, fOther] = [left, fLeft];
+      step = before = right - left;
+    }
+  }
+  return right;
+}
