@@ -1,14 +1,25 @@
 /** The cache of what the server said. */
-import { QueryClient } from '@tanstack/react-query';
-import { ProblemError } from './problem.ts';
+import { MutationCache, QueryCache, QueryClient } from '@tanstack/react-query';
+import { isProblem, ProblemError } from './problem.ts';
 
 /** A fault that trying again may mend: no connection, or the server is starting. */
 function isPassing(fault: unknown): boolean {
   return fault instanceof ProblemError && (fault.status === 0 || fault.status >= 502);
 }
 
-export function createQueryClient(): QueryClient {
-  return new QueryClient({
+/**
+ * The cache. `onSignedOut` is called where the server no longer knows who asks, which ends no page:
+ * what is being written there must not be lost.
+ */
+export function createQueryClient(onSignedOut: () => void = () => undefined): QueryClient {
+  const onError = (fault: Error) => {
+    if (!isProblem(fault, 'not-signed-in')) return;
+    void client.invalidateQueries({ queryKey: keys.session });
+    onSignedOut();
+  };
+  const client = new QueryClient({
+    queryCache: new QueryCache({ onError }),
+    mutationCache: new MutationCache({ onError }),
     defaultOptions: {
       queries: {
         staleTime: 15_000,
@@ -18,6 +29,7 @@ export function createQueryClient(): QueryClient {
       mutations: { retry: false },
     },
   });
+  return client;
 }
 
 /** The keys under which resources are kept. */

@@ -19,7 +19,7 @@ export function Specimen() {
   return (
     <div className="border-hair bg-sheet desk:grid-cols-[minmax(0,1.15fr)_minmax(0,1fr)] grid grid-cols-[minmax(0,1fr)] border">
       <section aria-label="Formulation" className="desk:px-28 desk:py-20 p-14">
-        <div className="text-label text-ink-3 mb-8 flex min-h-28 items-center gap-14 font-mono">
+        <div className="text-label text-ink-3 mb-12 flex min-h-28 items-center gap-14 font-mono">
           <span>Change a line and watch</span>
           {source !== SPECIMEN && (
             <QuietButton className="ml-auto" onClick={() => setSource(SPECIMEN)}>
@@ -33,7 +33,7 @@ export function Specimen() {
         aria-label="Consequences"
         className="border-hair desk:border-t-0 desk:border-l desk:px-28 desk:py-20 min-h-[620px] border-t p-14"
       >
-        <div className="text-label text-ink-3 mb-8 flex min-h-28 items-center gap-14 font-mono">
+        <div className="text-label text-ink-3 mb-12 flex min-h-28 items-center gap-14 font-mono">
           <span>Consequences</span>
           {derivation && milliseconds !== undefined && !isStale && (
             <span className="ml-auto tabular-nums">

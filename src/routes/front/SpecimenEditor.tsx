@@ -88,7 +88,7 @@ export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditor
           ))}
         </div>
       </div>
-      <ul id="specimen-faults" aria-live="polite" className="mt-8">
+      <ul id="specimen-faults" aria-live="polite" className="mt-14">
         {faults.slice(0, 3).map((fault) => (
           <li
             key={`${fault.code}${fault.span.start}`}

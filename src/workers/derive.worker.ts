@@ -1,0 +1,15 @@
+/** Derives what the page sends, off its main thread. */
+import { derive } from '../../shared/thermodynamics/index.ts';
+import type { DerivationRequest, DerivationResponse } from './derivationProtocol.ts';
+
+self.addEventListener('message', ({ data }: MessageEvent<DerivationRequest>) => {
+  const start = performance.now();
+  const { diagnostics, derivation } = derive(data.source);
+  const response: DerivationResponse = {
+    id: data.id,
+    diagnostics,
+    derivation,
+    milliseconds: performance.now() - start,
+  };
+  self.postMessage(response);
+});
