@@ -159,7 +159,7 @@ export async function lastingServices(onLoss) {
       );
   writeSecretFile(
     portsPath,
-    `${JSON.stringify({ ...readJson(portsPath), postgres: postgres.port, redis: redis.port })}\n`,
+    `${JSON.stringify({ ...readJson(portsPath), postgres: postgres.port ?? ports.postgres, redis: redis.port ?? ports.redis })}\n`,
   );
   return { postgres, redis };
 }
