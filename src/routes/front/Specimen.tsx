@@ -12,7 +12,7 @@ const Isotherms = lazy(async () => ({ default: (await import('./Isotherms.tsx'))
 
 export function Specimen() {
   const [source, setSource] = useState(SPECIMEN);
-  const { derivation, diagnostics, isStale, milliseconds } = useLiveDerivation(source);
+  const { derivation, diagnostics, failure, isStale, milliseconds } = useLiveDerivation(source);
   const firstFault = diagnostics.find(({ severity }) => severity === 'error');
   useEffect(() => void loadTypesetting(), []);
 
@@ -41,10 +41,11 @@ export function Specimen() {
             </span>
           )}
         </div>
-        {isStale && firstFault && derivation && (
+        {isStale && derivation && (firstFault ?? failure) && (
           <p role="status" className="border-cinnabar text-note text-ink-2 mb-8 border-l-2 pl-14">
-            Line {firstFault.line} must be mended before these follow again. They show the last
-            sound text.
+            {firstFault
+              ? `Line ${firstFault.line} must be mended before these follow again. They show the last sound text.`
+              : `${failure} These show the last sound text.`}
           </p>
         )}
         {derivation ? (
@@ -56,7 +57,8 @@ export function Specimen() {
           </>
         ) : (
           <p role="status" className="text-label text-ink-3 py-22 font-mono">
-            {firstFault ? 'Nothing follows until the formulation is sound.' : 'Deriving …'}
+            {failure ??
+              (firstFault ? 'Nothing follows until the formulation is sound.' : 'Deriving …')}
           </p>
         )}
       </section>
