@@ -25,7 +25,7 @@ function show() {
     ({ title, words, start }) => `${title} … ${words === '' ? '' : `${words}, `}${since(start)}`,
   );
   if (onTerminal) {
-    const width = (process.stdout.columns ?? 80) - 1;
+    const width = (process.stdout.columns || 80) - 1;
     process.stdout.write(`\r\x1b[2K${`  ${lines.join('; ')}`.slice(0, width)}`);
   } else {
     for (const line of lines) say(`  ${line}`);
