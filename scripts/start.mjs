@@ -12,7 +12,7 @@ import { ownFolder, readJson, ROOT, secrets, STATE, writeSecretFile } from './op
 import { requireNode } from './operate/packages.mjs';
 import { freePort, freePortFrom, isFree } from './operate/port.mjs';
 import { endAll, run } from './operate/process.mjs';
-import { claim, release, whoRuns } from './operate/running.mjs';
+import { claim, parentOf, release, whoRuns } from './operate/running.mjs';
 import { say, since, step } from './operate/say.mjs';
 import { ensureEverything, lastingServices } from './operate/services.mjs';
 import { didNotComeUp, keepRunning } from './operate/supervise.mjs';
@@ -47,11 +47,12 @@ function listenForTheEnd() {
       void leave(0);
     });
   }
-  // npm may be killed without handing the signal on.
+  // npm, which started us by way of a shell, may be killed without handing the signal on.
   if (process.env.npm_lifecycle_event !== undefined) {
-    const parent = process.ppid;
+    const ancestors = () => `${process.ppid} ${parentOf(process.ppid)}`;
+    const first = ancestors();
     setInterval(() => {
-      if (process.ppid !== parent) void leave(0);
+      if (ancestors() !== first) void leave(0);
     }, 1000).unref();
   }
 }

@@ -10,14 +10,24 @@ import { isAlive } from './process.mjs';
 
 const PLACE = join(STATE, 'running.json');
 
-/** Start of a process in clock ticks since boot; undefined when there is no such process. */
-function startTime(pid) {
+/** The fields of /proc/PID/stat behind the name; empty when there is no such process. */
+function statusOf(pid) {
   try {
     const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
-    return stat.slice(stat.lastIndexOf(')') + 2).split(' ')[19];
+    return stat.slice(stat.lastIndexOf(')') + 2).split(' ');
   } catch {
-    return undefined;
+    return [];
   }
+}
+
+/** The process that started another, as text; undefined when that one is gone. */
+export function parentOf(pid) {
+  return statusOf(pid)[1];
+}
+
+/** Start of a process in clock ticks since boot; undefined when there is no such process. */
+function startTime(pid) {
+  return statusOf(pid)[19];
 }
 
 function isRunning({ pid, startTime: since }) {
