@@ -46,7 +46,7 @@ export function Consequences({
       {derivation.claims.map((claim) => (
         <p
           key={claim.line}
-          className="text-note text-ink-2 mt-10 flex flex-wrap items-center gap-x-8"
+          className="text-note text-ink-2 mt-10 flex flex-wrap items-baseline gap-x-8"
         >
           <SealMark status={claim.status} />
           {claim.title || claim.text}

@@ -66,7 +66,7 @@ export function Component() {
     <Room
       windowTitle={title}
       title={title}
-      state={group && <span>you are {group.role}</span>}
+      state={group && <span>your role: {group.role}</span>}
       action={mayWrite && <ActButton onClick={() => setMaking(true)}>Open a notebook</ActButton>}
     >
       {isPending && <Loading what="the group" />}

@@ -39,14 +39,14 @@ export function Checks({
         {properties.map(({ symbol, status, checks }) => (
           <li key={symbol} className="border-hair border-b py-2">
             <details>
-              <summary className="flex min-h-28 items-center gap-10">
+              <summary className="flex min-h-28 items-baseline gap-10">
                 <span className="text-label text-ink min-w-38 font-mono">{symbol}</span>
                 <Seal status={status} {...count(checks)} />
               </summary>
               <ul className="pb-8 pl-14">
                 {checks.map((check) => (
                   <li key={check.kind + check.title} className="py-4">
-                    <span className="flex items-center gap-8">
+                    <span className="flex items-baseline gap-8">
                       <SealMark status={check.status} />
                       <span className="text-ink">{check.title}</span>
                     </span>
@@ -64,7 +64,7 @@ export function Checks({
           <ul>
             {verification.general.map((check) => (
               <li key={check.kind + check.title} className="py-4">
-                <span className="flex items-center gap-8">
+                <span className="flex items-baseline gap-8">
                   <SealMark status={check.status} />
                   <span className="text-ink">{check.title}</span>
                 </span>
@@ -80,7 +80,7 @@ export function Checks({
           <ul>
             {claims.map((claim) => (
               <li key={claim.line} className="py-4">
-                <span className="flex items-center gap-8">
+                <span className="flex items-baseline gap-8">
                   <SealMark status={claim.status} />
                   <span className="text-ink">{claim.title || claim.text}</span>
                 </span>
