@@ -3,8 +3,7 @@ import { number } from '../algebra/construct.ts';
 import type { Expression, Relation } from '../algebra/expression.ts';
 import * as Q from '../algebra/rational.ts';
 import { symbolsOf } from '../algebra/traverse.ts';
-import { compile, evaluatePrecisely } from '../numerics/index.ts';
-import type { Entry } from './catalogue/index.ts';
+import { compile } from '../numerics/compile.ts';
 import type { Model } from './model.ts';
 import { constantNumbersOf } from './numbers.ts';
 import type { State } from './sampling.ts';
@@ -84,16 +83,4 @@ export function holds(left: number, sign: Relation['sign'], right: number): bool
     case '>':
       return left > right;
   }
-}
-
-/** The value worked out to thirty digits and rounded once, so that nothing cancels away. */
-export function preciseValue(e: Expression, values: ReadonlyMap<string, number>): number {
-  return Number(evaluatePrecisely(e, values));
-}
-
-/** The value of a property of the model at a state, worked out precisely. */
-export function preciseCalculator(model: Model): (entry: Entry, state: State) => number {
-  const constants = constantNumbersOf(model.formulation);
-  return (entry, state) =>
-    preciseValue(model.worked(entry.symbol).value, new Map([...constants, ...state]));
 }

@@ -70,17 +70,21 @@ export function groupTerms(
     .map(([label, members]) => ({ label, f: sum(members) }));
 }
 
-/** What has no parameter comes first, then the parameters as the author's products name them. */
+/**
+ * What has no parameter comes first, then terms with a logarithm, the frame of a model, before what
+ * is added to it; otherwise the parameters follow each other as the author's products name them.
+ */
 function placeOf(members: readonly Expression[], naming: Naming): number {
   const { nameOrder } = naming.formulation;
-  let first = -1;
-  for (const { symbol, name } of naming.quantities) {
-    if (naming.masses.has(symbol) || !members.some((term) => symbolsOf(term).has(symbol))) continue;
-    const place = nameOrder.indexOf(name);
-    const known = place < 0 ? nameOrder.length : place;
-    if (first < 0 || known < first) first = known;
-  }
-  return first;
+  const places = naming.quantities
+    .filter(({ symbol }) => !naming.masses.has(symbol))
+    .filter(({ symbol }) => members.some((term) => symbolsOf(term).has(symbol)))
+    .map(({ name }) => nameOrder.indexOf(name));
+  if (places.length === 0) return -1;
+  const hasFunction = members.some((term) =>
+    (term.kind === 'product' ? term.factors : [term]).some((factor) => factor.kind === 'call'),
+  );
+  return Math.min(...places) + (hasFunction ? 0 : nameOrder.length + 1);
 }
 
 interface Naming {

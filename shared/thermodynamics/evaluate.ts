@@ -3,7 +3,7 @@ import type { Expression } from '../algebra/expression.ts';
 import { NotDifferentiable } from '../algebra/differentiate.ts';
 import * as Q from '../algebra/rational.ts';
 import type { Diagnostic } from '../language/diagnostic.ts';
-import { createCalculator, preciseValue } from './calculator.ts';
+import { createCalculator } from './calculator.ts';
 import { unitOf } from './catalogue/index.ts';
 import type { Model } from './model.ts';
 import { createNotation } from './notation.ts';
@@ -28,7 +28,8 @@ export interface Evaluation {
  * by their names; every property and report that exists where `quantities` is left out.
  *
  * `state` gives the natural variables and `overrides` other values of constants and parameters, all
- * in SI units. Faults are diagnostics: `missing-variable`, `unknown-name`, `outside-domain` with the
+ * in SI units. `valueOf` evaluates an expression in place of the calculation in doubles, with more
+ * digits say. Faults are diagnostics: `missing-variable`, `unknown-name`, `outside-domain` with the
  * relation that does not hold, `outside-bounds` (a warning), `no-value`.
  */
 export function evaluate(
@@ -36,6 +37,7 @@ export function evaluate(
   state: Readonly<Record<string, number>>,
   overrides: Readonly<Record<string, number>> = {},
   quantities?: readonly string[],
+  valueOf?: (e: Expression, values: ReadonlyMap<string, number>) => number,
 ): Evaluation {
   const { formulation } = model;
   const diagnostics: Diagnostic[] = [];
@@ -125,7 +127,9 @@ export function evaluate(
         );
         continue;
       }
-      const value = preciseValue(found.expression, calculator.valuesAt(at));
+      const value = valueOf
+        ? valueOf(found.expression, calculator.valuesAt(at))
+        : calculator.value(found.expression, at);
       if (Number.isFinite(value)) values.push({ symbol: name, value, unit: found.unit });
       else if (!isAll) fault('no-value', `${name} has no finite value at this state.`);
       else fault('no-value', `${name} has no finite value at this state.`, '', 'warning');

@@ -3,7 +3,8 @@
  * verification has an entry of its own, `verification/index.ts`, since it carries a library that
  * a browser that only derives does not need.
  */
-export { derive, deriveFormulation, type Derived, type DeriveOptions } from './derive.ts';
+export { derive } from './derive.ts';
+export { deriveFormulation, type Derived, type DeriveOptions } from './deriveFormulation.ts';
 export { evaluate, type EvaluatedValue, type Evaluation } from './evaluate.ts';
 export { createModel, type Model } from './model.ts';
 export { partialDerivative, NoSuchDerivative } from './partialDerivative.ts';

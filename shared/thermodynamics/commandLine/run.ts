@@ -4,6 +4,7 @@ import type { Diagnostic } from '../../language/diagnostic.ts';
 import { derive } from '../derive.ts';
 import { evaluate } from '../evaluate.ts';
 import { verify } from '../verification/index.ts';
+import { preciseValue } from '../verification/preciseValue.ts';
 import type { Arguments } from './arguments.ts';
 import { readAssignments } from './assignments.ts';
 import { alignOnPoint, figure, table } from './table.ts';
@@ -89,7 +90,7 @@ function evaluateAt(args: Arguments, source: string): Outcome {
     list.push({ code: 'state', severity: 'error', line: 1, column: 1, message, hint: '' });
   }
   if (isFault(list)) return outcome(args, list, { values: [] }, []);
-  const result = evaluate(model, state.values, overrides.values, args.quantities);
+  const result = evaluate(model, state.values, overrides.values, args.quantities, preciseValue);
   list.push(...result.diagnostics.map(shown));
   const figures = alignOnPoint(result.values.map(({ value }) => figure(value)));
   const rows = result.values.map(({ symbol, unit }, i) => [symbol, figures[i] ?? '', unit]);

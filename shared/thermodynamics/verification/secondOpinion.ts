@@ -1,7 +1,7 @@
 /** Every property from derivatives that an independent library took. */
 import { NotDifferentiable } from '../../algebra/differentiate.ts';
 import type { VerificationCheck } from '../../contracts/derivation.ts';
-import { preciseCalculator } from '../calculator.ts';
+import { preciseCalculator } from './preciseValue.ts';
 import type { Entry } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import { constantNumbersOf } from '../numbers.ts';

@@ -188,7 +188,7 @@ export function fluid(): Formulation {
     reports: [],
     claims: [],
     domain: [{ left: V, sign: '>', right: multiply(N, b) }],
-    nameOrder: ['N', 'k', 'T', 'V', 'b', 'a', 'm', 'h', 'Lambda'],
+    nameOrder: ['m', 'a', 'N', 'b', 'V', 'k', 'T', 'h', 'Lambda'],
     normalizedSource: 'Q = q^N / N!',
   };
 }

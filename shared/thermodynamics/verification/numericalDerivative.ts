@@ -1,0 +1,98 @@
+/** Every property from numerical derivatives of ln Q, taken with many digits. */
+import type { Expression } from '../../algebra/expression.ts';
+import type { VerificationCheck } from '../../contracts/derivation.ts';
+import {
+  big,
+  evaluatePrecisely,
+  isCostly,
+  preciseDerivative,
+  preciseMixedDerivative,
+  type BigNumber,
+} from '../../numerics/index.ts';
+import type { Entry } from '../catalogue/index.ts';
+import type { Model } from '../model.ts';
+import { constantNumbersOf } from '../numbers.ts';
+import type { State } from '../sampling.ts';
+import { exactly, type Approximate } from './approximate.ts';
+import { compareWithJets, type JetAtState } from './compareJets.ts';
+import { JetReader, type Jet } from './jet.ts';
+import { preciseCalculator, preciseConstants } from './preciseValue.ts';
+
+const KIND = 'numerical derivative';
+const TITLE = 'derivatives of ln Q by differences, with 64 digits';
+
+/** Sums and integrals cost hundreds of evaluations each. */
+const STATES_OF_COSTLY = 2;
+
+/** The check of each entry. */
+export function numericalDerivatives(
+  model: Model,
+  entries: readonly Entry[],
+  states: readonly State[],
+  onProgress: (done: number) => void,
+): (entry: Entry) => VerificationCheck {
+  const constants = preciseConstants(model.formulation);
+  const doubles = constantNumbersOf(model.formulation);
+  const tried = isCostly(model.f) ? states.slice(0, STATES_OF_COSTLY) : states;
+  const jets = tried.flatMap((state, i): JetAtState[] => {
+    onProgress(i / tried.length);
+    const jet = preciseJet(model, state, constants);
+    return jet ? [{ state, jet, values: new Map([...doubles, ...state]) }] : [];
+  });
+  if (jets.length === 0 || entries.length === 0) {
+    return () => ({
+      kind: KIND,
+      title: TITLE,
+      status: 'undecided',
+      detail: 'ln of the partition function cannot be had to so many digits.',
+    });
+  }
+  const readers = new Map(jets.map((at) => [at, new JetReader(model, at.jet, at.values)]));
+  const ours = preciseCalculator(model);
+  return (entry) => compareWithJets(model, entry, jets, readers, ours, KIND, TITLE);
+}
+
+/** ln Q with first and second derivatives at a state; undefined where a value is missing. */
+function preciseJet(
+  model: Model,
+  state: State,
+  constants: ReadonlyMap<string, BigNumber>,
+): Jet | undefined {
+  const f: Expression = model.f;
+  const names = model.naturals.map(({ name }) => name);
+  const at = names.map((name) => big(state.get(name) ?? NaN));
+  const moved = (changes: readonly (readonly [number, BigNumber])[]): BigNumber | undefined => {
+    const values = new Map<string, BigNumber>(constants);
+    names.forEach((name, i) => values.set(name, at[i] as BigNumber));
+    for (const [i, x] of changes) values.set(names[i] as string, x);
+    return evaluatePrecisely(f, values);
+  };
+  const value = moved([]);
+  const gradient = at.map((x, i) => preciseDerivative((y) => moved([[i, y]]), x, 1));
+  const hessian = at.map((x, i) =>
+    at.map((y, j) => {
+      if (j < i) return undefined;
+      return i === j
+        ? preciseDerivative((z) => moved([[i, z]]), x, 2)
+        : preciseMixedDerivative(
+            (a, b) =>
+              moved([
+                [i, a],
+                [j, b],
+              ]),
+            x,
+            y,
+          );
+    }),
+  );
+  const rounded = (x: BigNumber | undefined): Approximate =>
+    exactly(x ? Number(x.toString()) : NaN);
+  const first = gradient.map(rounded);
+  const second = hessian.map((row, i) =>
+    row.map((_, j) => rounded(hessian[Math.min(i, j)]?.[Math.max(i, j)])),
+  );
+  const isComplete = [...first, ...second.flat()].every((x) => !Number.isNaN(x.value));
+  return value && isComplete
+    ? { value: rounded(value), gradient: first, hessian: second }
+    : undefined;
+}
