@@ -60,13 +60,11 @@ export function createCalculator(
 
 const ZERO: Expression = number(Q.ZERO);
 
-function compileByName(e: Expression): (values: ReadonlyMap<string, number>) => number {
-  const symbols = [...symbolsOf(e)];
-  const code = compile(
-    [e],
-    symbols.map(({ name }) => name),
-  );
-  return (values) => code(symbols.map(({ name }) => values.get(name) ?? NaN))[0] ?? NaN;
+/** A function of the values of all symbols by name; π is known to it. */
+export function compileByName(e: Expression): (values: ReadonlyMap<string, number>) => number {
+  const names = [...symbolsOf(e)].map(({ name }) => name).filter((name) => name !== 'pi');
+  const code = compile([e], names);
+  return (values) => code(names.map((name) => values.get(name) ?? NaN))[0] ?? NaN;
 }
 
 /** Whether left (sign) right. */

@@ -1,7 +1,7 @@
 /** Extensivity decided by algebra, and where that fails by doubling the system in numbers. */
 import type { Expression } from '../algebra/expression.ts';
 import type { Calculator } from './calculator.ts';
-import { homogeneityOf, type Homogeneity } from './homogeneity.ts';
+import { extensiveVariables, homogeneityOf, type Homogeneity } from './homogeneity.ts';
 import type { Model } from './model.ts';
 import { drawState, seededNumbers } from './sampling.ts';
 
@@ -18,9 +18,7 @@ export function homogeneityAt(
 ): { verdict: Homogeneity; method: string } {
   const symbolic = homogeneityOf(model, f);
   if (symbolic !== 'undecided') return { verdict: symbolic, method: 'Decided by Euler’s theorem.' };
-  const sizes = model.surroundings.naturals.filter(
-    ({ role }) => role === 'number' || role === 'extent',
-  );
+  const sizes = extensiveVariables(model);
   if (sizes.length === 0) {
     return { verdict: 'undecided', method: 'No size of the system is a natural variable.' };
   }

@@ -2,7 +2,7 @@
 import type { Diagnostic } from '../language/diagnostic.ts';
 import { createCalculator } from './calculator.ts';
 import { homogeneityAt } from './extensivity.ts';
-import { withFactorials } from './homogeneity.ts';
+import { extensiveVariables, withFactorials } from './homogeneity.ts';
 import type { Model } from './model.ts';
 
 type At = (
@@ -23,8 +23,7 @@ function extensivity(model: Model, at: At): Diagnostic[] {
   const { verdict } = homogeneityAt(model, calculator);
   if (verdict !== 'not extensive') return [];
   const name = model.formulation.partitionFunction;
-  const symbolsOfSize = model.surroundings.naturals
-    .filter(({ role }) => role === 'number' || role === 'extent')
+  const symbolsOfSize = extensiveVariables(model)
     .map((variable) => variable.name)
     .join(', ');
   const isMissingFactorial =

@@ -40,6 +40,8 @@ export function formsOf(model: Model): Form[] {
   if (model.formulation.ensemble !== 'canonical' || components.length === 0) return [];
   const sizes = (perSystem: Expression, extentName: string): Map<Expression, Expression> => {
     const map = new Map<Expression, Expression>();
+    // The mole fractions add up to one.
+    if (components.length > 1) map.set(sum(components.map(({ number: n }) => n)), perSystem);
     for (const { species, number } of components) {
       const share = species === '' ? one : symbol(`x_${species}`, { positive: true });
       map.set(number, multiply(share, perSystem));

@@ -1,5 +1,5 @@
 /** What is to be said beside a property: where it diverges, what was assumed. */
-import { number, power, splitCoefficient, sum, subtract } from '../algebra/construct.ts';
+import { negate, number, power, splitCoefficient, sum, subtract } from '../algebra/construct.ts';
 import { childrenOf, type Expression } from '../algebra/expression.ts';
 import * as Q from '../algebra/rational.ts';
 import { isPositive } from '../algebra/sign.ts';
@@ -21,7 +21,9 @@ export function notesOf(model: Model, entry: Entry, value: Expression, notation:
     });
   }
   for (const denominator of denominatorsOf(value)) {
-    if (isPositive(denominator) || isInDomain(model, denominator)) continue;
+    if (isPositive(denominator) || isBoseFactor(denominator) || isInDomain(model, denominator)) {
+      continue;
+    }
     const { left, right } = bySign(denominator);
     if (right.kind === 'number' && Q.isZero(right.value) && denominator.kind !== 'sum') continue;
     notes.push({
@@ -60,6 +62,15 @@ function denominatorsOf(e: Expression): Expression[] {
   };
   visit(e);
   return [...found];
+}
+
+/** e^x − 1 and 1 − e^(−x) with a positive x do not vanish. */
+function isBoseFactor(e: Expression): boolean {
+  if (e.kind !== 'sum' || e.terms.length !== 1 || !e.terms[0]) return false;
+  const { coefficient, rest } = splitCoefficient(e.terms[0]);
+  if (!Q.isZero(Q.add(coefficient, e.constant))) return false;
+  const [x] = rest.kind === 'call' && rest.name === 'exp' ? rest.arguments : [];
+  return x !== undefined && (isPositive(x) || isPositive(negate(x)));
 }
 
 /** Whether the domain keeps the expression from vanishing. */

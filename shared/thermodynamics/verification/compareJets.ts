@@ -1,6 +1,7 @@
 /** A property as derived held against the same property read off jets of ln Q. */
 import type { CheckStatus, VerificationCheck } from '../../contracts/derivation.ts';
 import { describe } from '../claims/decide.ts';
+import type { BigNumber } from '../../numerics/bigNumber.ts';
 import type { Entry } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import { inWords } from '../numbers.ts';
@@ -11,15 +12,15 @@ export interface JetAtState {
   readonly state: State;
   readonly jet: Jet;
   /** The state and all constants by name. */
-  readonly values: ReadonlyMap<string, number>;
+  readonly values: ReadonlyMap<string, BigNumber>;
 }
 
 /** Digits that must agree beyond the error that the jet itself carries. */
 const TOLERANCE = 1e-9;
 /** Errors of jets are estimates; this much more is forgiven. */
 const MARGIN = 100;
-/** An error above this part of the value says nothing. */
-const MEANINGLESS = 1e-3;
+/** An error above this part of what a value is made of says nothing. */
+const MEANINGLESS = 1e-9;
 
 /** Compares at every state; `ours` gives the derived property's value. */
 export function compareWithJets(
@@ -43,23 +44,23 @@ export function compareWithJets(
   for (const at of jets) {
     const reader = readers.get(at) ?? new JetReader(model, at.jet, at.values);
     const derived = ours(entry, at.state);
-    const other = reader.property(entry.symbol);
-    if (!Number.isFinite(derived) || !Number.isFinite(other.value)) continue;
-    const scale = Math.max(Math.abs(derived), Math.abs(other.value));
-    const difference = Math.abs(derived - other.value);
-    const allowed = TOLERANCE * scale + MARGIN * other.error;
-    if (difference > allowed) {
-      return result(
-        'failed',
-        `${inWords(derived)} as derived, ${inWords(other.value)} by this check, at ${describe(model, at.state)}.`,
-      );
-    }
-    if (scale > 0 && MARGIN * other.error > MEANINGLESS * scale && difference > TOLERANCE * scale) {
+    const read = reader.property(entry.symbol);
+    const other = Number(read.value.toString());
+    if (!Number.isFinite(derived) || !Number.isFinite(other)) continue;
+    const size = Math.max(Math.abs(derived), Math.abs(other));
+    const difference = Math.abs(derived - other);
+    if (!(MARGIN * read.error <= MEANINGLESS * read.scale) && read.scale > 0) {
       unclear++;
       continue;
     }
+    if (difference > TOLERANCE * size + MARGIN * read.error) {
+      return result(
+        'failed',
+        `${inWords(derived)} as derived, ${inWords(other)} by this check, at ${describe(model, at.state)}.`,
+      );
+    }
     compared++;
-    if (scale > 0) worst = Math.max(worst, difference / scale);
+    if (difference > MARGIN * read.error) worst = Math.max(worst, difference / size);
   }
   if (compared === 0) {
     return result(

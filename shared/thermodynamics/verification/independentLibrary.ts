@@ -6,6 +6,7 @@ import {
   absDependencies,
   acosDependencies,
   addDependencies,
+  bignumberDependencies,
   asinhDependencies,
   atanhDependencies,
   ConstantNodeDependencies,
@@ -38,14 +39,16 @@ import {
 import type { Expression, FunctionName, SymbolNode } from '../../algebra/expression.ts';
 import * as Q from '../../algebra/rational.ts';
 import { expandAbbreviations, nodeCount } from '../../algebra/traverse.ts';
+import { big, BIG_PI, bigOfRational, DIGITS, type BigNumber } from '../../numerics/bigNumber.ts';
+import { known, type Approximate } from './approximate.ts';
 import type { Jet } from './jet.ts';
-import type { Approximate } from './approximate.ts';
 
 /** Only what differentiates and evaluates; the library's parser is no part of the instance. */
 const PARTS = [
   absDependencies,
   acosDependencies,
   addDependencies,
+  bignumberDependencies,
   asinhDependencies,
   atanhDependencies,
   ConstantNodeDependencies,
@@ -74,7 +77,10 @@ const PARTS = [
   unaryMinusDependencies,
 ].filter((part) => part !== undefined);
 
-const math = create(Object.fromEntries(PARTS.map((part, i) => [String(i), part])));
+const math = create(Object.fromEntries(PARTS.map((part, i) => [String(i), part])), {
+  number: 'BigNumber',
+  precision: DIGITS,
+});
 
 export const LIBRARY = 'mathjs';
 
@@ -101,8 +107,8 @@ const FUNCTIONS: Partial<Record<FunctionName, string>> = {
   abs: 'abs',
 };
 
-/** The error that is allowed to a value of the library, relative to it. */
-const RELATIVE_ERROR = 1e-12;
+/** Digits of the library's values that are relied on. */
+const RELIABLE_DIGITS = 40;
 
 /**
  * A function that gives ln Q with its first and second derivatives at values of all its symbols.
@@ -111,7 +117,7 @@ const RELATIVE_ERROR = 1e-12;
 export function jetByLibrary(
   f: Expression,
   naturals: readonly SymbolNode[],
-): (values: ReadonlyMap<string, number>) => Jet {
+): (values: ReadonlyMap<string, BigNumber>) => Jet {
   const expanded = expandAbbreviations(f);
   if (nodeCount(expanded) > LARGEST_TREE) {
     throw new BeyondLibrary(`the expression has more than ${LARGEST_TREE} nodes`);
@@ -126,20 +132,19 @@ export function jetByLibrary(
   const value = tree.compile();
   const gradient = first.map((node) => node.compile());
   return (values) => {
-    const scope = new Map<string, number>();
-    for (const [name, safe] of names) scope.set(safe, values.get(name) ?? NaN);
-    const at = (code: { evaluate(scope: Map<string, number>): unknown }): Approximate => {
-      const result = Number(code.evaluate(scope));
-      return { value: result, error: RELATIVE_ERROR * Math.abs(result) };
-    };
+    const scope = new Map<string, unknown>();
+    for (const [name, safe] of names) {
+      // Numbers of one instance of the library are foreign to another: they pass as text.
+      scope.set(safe, math.bignumber((values.get(name) ?? big(NaN)).toString()));
+    }
+    const at = (code: { evaluate(scope: Map<string, unknown>): unknown }): Approximate =>
+      known(big(String(code.evaluate(scope))), RELIABLE_DIGITS);
     const upper = second.map((row) => row.map(at));
     return {
       value: at(value),
       gradient: gradient.map(at),
       hessian: naturals.map((_, i) =>
-        naturals.map(
-          (__, j) => upper[Math.min(i, j)]?.[Math.abs(i - j)] ?? { value: NaN, error: 0 },
-        ),
+        naturals.map((__, j) => upper[Math.min(i, j)]?.[Math.abs(i - j)] ?? known(NaN)),
       ),
     };
   };
@@ -148,9 +153,11 @@ export function jetByLibrary(
 /** The tree, with symbols renamed x1, x2 … so that none is a name of the library's. */
 function build(e: Expression, names: Map<string, string>): MathNode {
   const { ConstantNode, FunctionNode, OperatorNode, SymbolNode } = math;
+  const constant = (value: BigNumber): MathNode =>
+    new ConstantNode(math.bignumber(value.toString()) as unknown as number);
   const fold = (operator: '+' | '*', name: 'add' | 'multiply', parts: MathNode[]): MathNode => {
     const [first, ...rest] = parts;
-    if (!first) return new ConstantNode(operator === '+' ? 0 : 1);
+    if (!first) return constant(big(operator === '+' ? 0 : 1));
     return rest.reduce<MathNode>(
       (left, right) => new OperatorNode(operator, name, [left, right]),
       first,
@@ -158,9 +165,9 @@ function build(e: Expression, names: Map<string, string>): MathNode {
   };
   switch (e.kind) {
     case 'number':
-      return new ConstantNode(Q.toNumber(e.value));
+      return constant(bigOfRational(e.value));
     case 'symbol': {
-      if (e.name === 'pi') return new ConstantNode(Math.PI);
+      if (e.name === 'pi') return constant(BIG_PI);
       let safe = names.get(e.name);
       if (!safe) names.set(e.name, (safe = `x${names.size + 1}`));
       return new SymbolNode(safe);
@@ -168,11 +175,11 @@ function build(e: Expression, names: Map<string, string>): MathNode {
     case 'sum':
       return fold('+', 'add', [
         ...e.terms.map((term) => build(term, names)),
-        ...(Q.isZero(e.constant) ? [] : [new ConstantNode(Q.toNumber(e.constant))]),
+        ...(Q.isZero(e.constant) ? [] : [constant(bigOfRational(e.constant))]),
       ]);
     case 'product':
       return fold('*', 'multiply', [
-        ...(Q.isOne(e.coefficient) ? [] : [new ConstantNode(Q.toNumber(e.coefficient))]),
+        ...(Q.isOne(e.coefficient) ? [] : [constant(bigOfRational(e.coefficient))]),
         ...e.factors.map((factor) => build(factor, names)),
       ]);
     case 'power':

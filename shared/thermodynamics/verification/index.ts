@@ -13,13 +13,14 @@ import type {
   Verification,
   VerificationCheck,
 } from '../../contracts/derivation.ts';
+import { isCostly } from '../../numerics/index.ts';
 import { createCalculator } from '../calculator.ts';
 import type { Entry } from '../catalogue/index.ts';
 import { homogeneityOf } from '../homogeneity.ts';
 import type { Model } from '../model.ts';
 import { NoSuchDerivative } from '../partialDerivative.ts';
 import { drawState, seededNumbers, type State } from '../sampling.ts';
-import { checkDimension } from './dimensions.ts';
+import { dimensionChecks } from './dimensions.ts';
 import { generalChecks } from './general.ts';
 import { checkIdentities } from './checkIdentities.ts';
 import { secondOpinion } from './secondOpinion.ts';
@@ -54,13 +55,9 @@ export function verify(model: Model, { onProgress }: VerifyOptions = {}): Verifi
     say('checking identities', 0.6 + 0.3 * done),
   );
   say('checking dimensions and limits', 0.9);
+  const dimensions = dimensionChecks(model, states.slice(0, isCostly(model.f) ? 1 : 3));
   const properties: PropertyVerification[] = entries.map((entry) => {
-    const checks = [
-      opinions(entry),
-      numerical(entry),
-      ...identities(entry),
-      checkDimension(model, entry),
-    ];
+    const checks = [opinions(entry), numerical(entry), ...identities(entry), dimensions(entry)];
     return { symbol: entry.symbol, status: overall(checks), checks };
   });
   const general = within(() => generalChecks(model, calculator)) ?? [];

@@ -5,14 +5,15 @@
  * workings that stand for definitions) has a part in it.
  */
 import type { Expression, SymbolNode } from '../../algebra/expression.ts';
-import * as Q from '../../algebra/rational.ts';
+import { big, bigOfRational, type BigNumber } from '../../numerics/bigNumber.ts';
 import { isProperty } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import {
+  ONE,
   ZERO,
   add,
   determinant,
-  exactly,
+  known,
   multiply,
   power,
   type Approximate,
@@ -33,12 +34,12 @@ interface Dual {
 
 /** Reads properties off one jet; `values` holds the state and all constants by name. */
 export class JetReader {
-  private readonly known = new Map<string, Dual>();
+  private readonly found = new Map<string, Dual>();
   private readonly model: Model;
   private readonly jet: Jet;
-  private readonly values: ReadonlyMap<string, number>;
+  private readonly values: ReadonlyMap<string, BigNumber>;
 
-  constructor(model: Model, jet: Jet, values: ReadonlyMap<string, number>) {
+  constructor(model: Model, jet: Jet, values: ReadonlyMap<string, BigNumber>) {
     this.model = model;
     this.jet = jet;
     this.values = values;
@@ -50,12 +51,12 @@ export class JetReader {
   }
 
   private dualOf(name: string): Dual {
-    const known = this.known.get(name);
-    if (known) return known;
+    const remembered = this.found.get(name);
+    if (remembered) return remembered;
     const entry = this.model.entry(name);
     if (!entry) throw new RangeError(`no property ${name}`);
     const dual = this.read(entry.definition);
-    this.known.set(name, dual);
+    this.found.set(name, dual);
     return dual;
   }
 
@@ -70,32 +71,32 @@ export class JetReader {
     }
     switch (e.kind) {
       case 'number':
-        return this.constant(exactly(Q.toNumber(e.value)));
+        return this.constant(known(bigOfRational(e.value)));
       case 'symbol': {
         const index = naturals.indexOf(e);
         const value = this.values.get(e.name);
         if (index >= 0 && value !== undefined) {
           return {
-            value: exactly(value),
-            gradient: naturals.map((_, i) => (i === index ? { value: 1, error: 0 } : ZERO)),
+            value: known(value),
+            gradient: naturals.map((_, i) => (i === index ? ONE : ZERO)),
           };
         }
         if (isProperty(e) && this.model.entry(e.name)) return this.dualOf(e.name);
         if (value === undefined) throw new RangeError(`no value of ${e.name}`);
-        return this.constant(exactly(value));
+        return this.constant(known(value));
       }
       case 'sum':
         return [...e.terms.map((term) => this.read(term))].reduce(
           sumOf,
-          this.constant(exactly(Q.toNumber(e.constant))),
+          this.constant(known(bigOfRational(e.constant))),
         );
       case 'product':
         return e.factors
           .map((factor) => this.read(factor))
-          .reduce(productOf, this.constant(exactly(Q.toNumber(e.coefficient))));
+          .reduce(productOf, this.constant(known(bigOfRational(e.coefficient))));
       case 'power': {
         if (e.exponent.kind !== 'number') break;
-        return powerOf(this.read(e.base), Q.toNumber(e.exponent.value));
+        return powerOf(this.read(e.base), bigOfRational(e.exponent.value));
       }
       case 'call':
         if (e.name === 'partial') return this.partial(e.arguments);
@@ -124,7 +125,7 @@ export class JetReader {
     const rows = held.filter((z) => !naturals.includes(z as SymbolNode)).map(rowOf);
     const above = determinant([rowOf(of), ...rows]);
     const below = determinant([rowOf(by), ...rows]);
-    return { value: multiply(above, power(below, -1)), gradient: undefined };
+    return { value: multiply(above, power(below, big(-1))), gradient: undefined };
   }
 }
 
@@ -148,8 +149,8 @@ function productOf(a: Dual, b: Dual): Dual {
   };
 }
 
-function powerOf(a: Dual, n: number): Dual {
-  const outer = multiply(exactly(n), power(a.value, n - 1));
+function powerOf(a: Dual, n: BigNumber): Dual {
+  const outer = multiply(known(n), power(a.value, n.minus(1)));
   return {
     value: power(a.value, n),
     gradient: a.gradient?.map((slope) => multiply(outer, slope)),

@@ -11,16 +11,17 @@ import {
 } from '../../numerics/index.ts';
 import type { Entry } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
-import { constantNumbersOf } from '../numbers.ts';
 import type { State } from '../sampling.ts';
-import { exactly, type Approximate } from './approximate.ts';
+import { known, type Approximate } from './approximate.ts';
 import { compareWithJets, type JetAtState } from './compareJets.ts';
 import { JetReader, type Jet } from './jet.ts';
-import { preciseCalculator, preciseConstants } from './preciseValue.ts';
+import { preciseCalculator, preciseConstants, preciseValuesAt } from './preciseValue.ts';
 
 const KIND = 'numerical derivative';
 const TITLE = 'derivatives of ln Q by differences, with 64 digits';
 
+/** Second derivatives by differences are good to some 26 digits. */
+const RELIABLE_DIGITS = 22;
 /** Sums and integrals cost hundreds of evaluations each. */
 const STATES_OF_COSTLY = 2;
 
@@ -32,12 +33,11 @@ export function numericalDerivatives(
   onProgress: (done: number) => void,
 ): (entry: Entry) => VerificationCheck {
   const constants = preciseConstants(model.formulation);
-  const doubles = constantNumbersOf(model.formulation);
   const tried = isCostly(model.f) ? states.slice(0, STATES_OF_COSTLY) : states;
   const jets = tried.flatMap((state, i): JetAtState[] => {
     onProgress(i / tried.length);
     const jet = preciseJet(model, state, constants);
-    return jet ? [{ state, jet, values: new Map([...doubles, ...state]) }] : [];
+    return jet ? [{ state, jet, values: preciseValuesAt(constants, state) }] : [];
   });
   if (jets.length === 0 || entries.length === 0) {
     return () => ({
@@ -85,13 +85,12 @@ function preciseJet(
           );
     }),
   );
-  const rounded = (x: BigNumber | undefined): Approximate =>
-    exactly(x ? Number(x.toString()) : NaN);
+  const rounded = (x: BigNumber | undefined): Approximate => known(x ?? big(NaN), RELIABLE_DIGITS);
   const first = gradient.map(rounded);
   const second = hessian.map((row, i) =>
     row.map((_, j) => rounded(hessian[Math.min(i, j)]?.[Math.max(i, j)])),
   );
-  const isComplete = [...first, ...second.flat()].every((x) => !Number.isNaN(x.value));
+  const isComplete = [...first, ...second.flat()].every((x) => !x.value.isNaN());
   return value && isComplete
     ? { value: rounded(value), gradient: first, hessian: second }
     : undefined;

@@ -1,14 +1,13 @@
 /** Values worked out to many digits and rounded once, so that nothing cancels away. */
 import type { Expression } from '../../algebra/expression.ts';
-import { compile } from '../../numerics/compile.ts';
 import {
   big,
   evaluatePrecisely,
   type BigNumber,
   type PreciseValues,
 } from '../../numerics/index.ts';
-import { symbolsOf } from '../../algebra/traverse.ts';
 import type { Formulation } from '../../language/formulation.ts';
+import { compileByName } from '../calculator.ts';
 import type { Entry } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
 import { constantsOf } from '../numbers.ts';
@@ -21,8 +20,7 @@ import type { State } from '../sampling.ts';
 export function preciseValue(e: Expression, values: ReadonlyMap<string, number>): number {
   const precise = evaluatePrecisely(e, values);
   if (precise) return Number(precise.toString());
-  const names = [...symbolsOf(e)].map(({ name }) => name);
-  return compile([e], names)(names.map((name) => values.get(name) ?? NaN))[0] ?? NaN;
+  return compileByName(e)(values);
 }
 
 /** The constants of a formulation with all their digits, by name. */
@@ -48,4 +46,12 @@ export function preciseCalculator(model: Model): (entry: Entry, state: State) =>
     ]);
     return preciseValue(model.worked(entry.symbol).value, new Map([...doubles, ...state]));
   };
+}
+
+/** The state and the constants with all their digits, by name. */
+export function preciseValuesAt(
+  constants: ReadonlyMap<string, BigNumber>,
+  state: State,
+): ReadonlyMap<string, BigNumber> {
+  return new Map([...constants, ...[...state].map(([n, x]): [string, BigNumber] => [n, big(x)])]);
 }

@@ -1,10 +1,9 @@
 /** Every property from derivatives that an independent library took. */
 import { NotDifferentiable } from '../../algebra/differentiate.ts';
 import type { VerificationCheck } from '../../contracts/derivation.ts';
-import { preciseCalculator } from './preciseValue.ts';
+import { preciseCalculator, preciseConstants, preciseValuesAt } from './preciseValue.ts';
 import type { Entry } from '../catalogue/index.ts';
 import type { Model } from '../model.ts';
-import { constantNumbersOf } from '../numbers.ts';
 import type { State } from '../sampling.ts';
 import { compareWithJets, type JetAtState } from './compareJets.ts';
 import { BeyondLibrary, jetByLibrary, LIBRARY } from './independentLibrary.ts';
@@ -28,9 +27,9 @@ export function secondOpinion(
   if (entries.length === 0) return undecided('There is nothing to check.');
   try {
     const jetAt = jetByLibrary(model.f, model.naturals);
-    const constants = constantNumbersOf(model.formulation);
+    const constants = preciseConstants(model.formulation);
     const jets = states.map((state): JetAtState => {
-      const values = new Map([...constants, ...state]);
+      const values = preciseValuesAt(constants, state);
       return { state, values, jet: jetAt(values) };
     });
     const readers = new Map(jets.map((at) => [at, new JetReader(model, at.jet, at.values)]));
