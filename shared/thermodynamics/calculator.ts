@@ -42,7 +42,7 @@ export function createCalculator(
   const violated = (state: State): Violation | undefined => {
     for (const [name, x] of state) {
       const variable = model.surroundings.naturals.find((v) => v.name === name);
-      const mayBeNegative = variable?.role === 'chemical potential' || variable?.role === 'field';
+      const mayBeNegative = variable !== undefined && SIGNED.has(variable.role);
       if (variable && !mayBeNegative && !(x > 0)) {
         const relation: Relation = { left: variable.symbol, sign: '>', right: ZERO };
         return { relation, left: x, right: 0 };
@@ -57,6 +57,9 @@ export function createCalculator(
   };
   return { value, violated, isInDomain: (state) => violated(state) === undefined, valuesAt };
 }
+
+/** Variables that may have either sign; all others are positive. */
+const SIGNED: ReadonlySet<string> = new Set(['chemical potential', 'field', 'energy']);
 
 const ZERO: Expression = number(Q.ZERO);
 

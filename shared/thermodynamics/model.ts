@@ -2,7 +2,7 @@
  * A model: a checked formulation together with the properties that follow from it, each worked out
  * when it is first asked for and remembered.
  */
-import { sum } from '../algebra/construct.ts';
+import { divide, sum } from '../algebra/construct.ts';
 import type { Expression, SymbolNode } from '../algebra/expression.ts';
 import { Simplifier } from '../algebra/simplify.ts';
 import { rebuild } from '../algebra/traverse.ts';
@@ -110,7 +110,11 @@ export function createModel(
       const variable = formulation.variables.find(({ name }) => name === e.name);
       if (variable) return variable.symbol;
       if (ofCatalogue ? !isProperty(e) : declared.has(e.name)) return e;
-      return byName.has(e.name) ? worked(e.name).value : e;
+      if (byName.has(e.name)) return worked(e.name).value;
+      if (/^B[2-5]$/.test(e.name) || e.name.startsWith('gamma_')) {
+        throw new NoSuchDerivative(`${e.name} is not derived yet.`);
+      }
+      return ofMixture(e.name) ?? e;
     }
     if (e.kind === 'call' && e.name === 'partial') {
       const [of, by, ...held] = e.arguments;
@@ -126,6 +130,13 @@ export function createModel(
       );
     }
     return rebuild(e, (part) => resolve(part, ofCatalogue));
+  };
+
+  /** The total number N and the mole fractions x_w of a mixture. */
+  const ofMixture = (name: string): Expression | undefined => {
+    if (name === 'N') return resolve(totalNumber, true);
+    const component = surroundings.components.find(({ species }) => name === `x_${species}`);
+    return component && resolve(divide(component.number, totalNumber), true);
   };
 
   /**

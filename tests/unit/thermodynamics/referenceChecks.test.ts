@@ -45,7 +45,7 @@ const CODES: Readonly<Record<string, string>> = {
   'two partition functions': 'two-partition-functions',
   'foreign variable': 'foreign-variable',
   'order parameter not used': 'order-parameter-not-used',
-  'log is ambiguous': 'ambiguous-log',
+  'log is ambiguous': 'log-is-ambiguous',
   'divergent sum': 'divergent-sum',
   'divergent integral': 'divergent-integral',
   'not extensive': 'not-extensive',
