@@ -1,0 +1,23 @@
+/** The structured log of a process; secrets never reach it. */
+import { pino, type Logger } from 'pino';
+import type { Config } from './config.ts';
+
+export type { Logger };
+
+export function createLog(config: Pick<Config, 'LOG_LEVEL'>, name: string): Logger {
+  return pino({
+    name,
+    level: config.LOG_LEVEL,
+    redact: {
+      paths: [
+        'req.headers.cookie',
+        'req.headers.authorization',
+        'req.headers["x-csrf-token"]',
+        'res.headers["set-cookie"]',
+        '*.password',
+        '*.token',
+      ],
+      censor: '[withheld]',
+    },
+  });
+}

@@ -1,0 +1,42 @@
+/** Whether the process lives, and whether it can do its work. */
+import { Router } from 'express';
+import type { Redis } from 'ioredis';
+import type { Database } from '../database.ts';
+
+export function healthRoutes(database: Database, redis: Redis): Router {
+  const router = Router();
+
+  router.get('/healthz', (_request, response) => {
+    response.json({ status: 'alive' });
+  });
+
+  router.get('/readyz', async (_request, response) => {
+    const [databaseAnswers, redisAnswers] = await Promise.all([
+      answers(() => database.sequelize.query('SELECT 1')),
+      answers(() => redis.ping()),
+    ]);
+    response
+      .status(databaseAnswers && redisAnswers ? 200 : 503)
+      .json({ database: databaseAnswers, redis: redisAnswers });
+  });
+
+  return router;
+}
+
+const PATIENCE_MS = 2_000;
+
+async function answers(ask: () => Promise<unknown>): Promise<boolean> {
+  let timer: NodeJS.Timeout | undefined;
+  const impatience = new Promise<false>((resolve) => {
+    timer = setTimeout(() => {
+      resolve(false);
+    }, PATIENCE_MS);
+  });
+  try {
+    return await Promise.race([ask().then(() => true), impatience]);
+  } catch {
+    return false;
+  } finally {
+    clearTimeout(timer);
+  }
+}

@@ -1,0 +1,88 @@
+/** The worker process: takes derivations from the queue. As many may run as there are cores. */
+import process from 'node:process';
+import { Worker, type ConnectionOptions } from 'bullmq';
+import { ConfigFault, readConfig } from '../server/config.ts';
+import { openDatabase } from '../server/database.ts';
+import { createLog } from '../server/log.ts';
+import {
+  connectRedis,
+  openDerivationQueue,
+  type DerivationJob,
+} from '../server/queue/derivationQueue.ts';
+import { openOutboxRelay } from '../server/queue/outboxRelay.ts';
+import { giveUp, processDerivation } from './processDerivation.ts';
+import { sweepLost } from './sweepLost.ts';
+
+const SWEEP_EVERY_MS = 15_000;
+
+async function main(): Promise<void> {
+  const config = readConfig();
+  const log = createLog(config, 'worker');
+  const database = openDatabase(config.DATABASE_URL, config.WORKER_CONCURRENCY + 3);
+  await database.sequelize.authenticate();
+  const connection = connectRedis(config.REDIS_URL);
+  const queueConnection = connectRedis(config.REDIS_URL);
+  for (const redis of [connection, queueConnection]) {
+    redis.on('error', (error) => {
+      log.warn({ err: error }, 'Redis does not answer');
+    });
+  }
+  const queue = openDerivationQueue(config, queueConnection);
+  const relay = await openOutboxRelay(database, config.DATABASE_URL, queue, log);
+  const shutdown = new AbortController();
+  const limits = { seconds: config.DERIVATION_SECONDS, megabytes: config.DERIVATION_MEGABYTES };
+  const worker = new Worker<DerivationJob>(
+    config.QUEUE_NAME,
+    async ({ data }) => {
+      log.info(data, 'derivation begins');
+      await processDerivation(database, data, limits, log, shutdown.signal);
+    },
+    {
+      connection: connection as unknown as ConnectionOptions,
+      concurrency: config.WORKER_CONCURRENCY,
+      // A worker that was killed is missed after this long; its jobs go to another one, and that
+      // may happen as often as workers are killed.
+      lockDuration: config.LOCK_MILLISECONDS,
+      stalledInterval: config.LOCK_MILLISECONDS / 2,
+      maxStalledCount: 100,
+    },
+  );
+  worker.on('failed', (job, error) => {
+    log.warn({ err: error, ...job?.data }, 'derivation failed');
+    if (job && job.attemptsMade >= (job.opts.attempts ?? 1) && !shutdown.signal.aborted) {
+      giveUp(database, job.data, error.message).catch((fault: unknown) => {
+        log.error({ err: fault }, 'the failure could not be written');
+      });
+    }
+  });
+  worker.on('error', (error) => {
+    log.warn({ err: error }, 'the queue does not answer');
+  });
+  const sweeper = setInterval(() => {
+    sweepLost(database, queue).then(
+      (count) => {
+        if (count > 0) log.warn({ count }, 'lost derivations were put in again');
+      },
+      (error: unknown) => {
+        log.warn({ err: error }, 'lost derivations could not be looked for');
+      },
+    );
+  }, SWEEP_EVERY_MS);
+  log.info({ concurrency: config.WORKER_CONCURRENCY }, 'working');
+
+  const end = (): void => {
+    log.info('ending');
+    clearInterval(sweeper);
+    shutdown.abort();
+    void Promise.allSettled([relay.close(), worker.close()])
+      .then(() => Promise.allSettled([queue.close(), database.close()]))
+      .then(() => process.exit(0));
+  };
+  process.once('SIGTERM', end);
+  process.once('SIGINT', end);
+}
+
+main().catch((error: unknown) => {
+  console.error(error instanceof ConfigFault ? error.message : error);
+  process.exit(1);
+});
