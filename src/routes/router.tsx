@@ -38,11 +38,12 @@ export function createRouter(client: QueryClient) {
           children: [
             { index: true, lazy: () => import('./sign-in/SignIn.tsx') },
             { path: 'register', lazy: () => import('./sign-in/Register.tsx') },
-            { path: 'confirm/:token?', lazy: () => import('./sign-in/ConfirmEmail.tsx') },
             { path: 'forgotten', lazy: () => import('./sign-in/ForgottenPassword.tsx') },
-            { path: 'reset/:token', lazy: () => import('./sign-in/ResetPassword.tsx') },
           ],
         },
+        // Where the links of mails lead.
+        { path: 'confirm-email', lazy: () => import('./sign-in/ConfirmEmail.tsx') },
+        { path: 'new-password', lazy: () => import('./sign-in/ResetPassword.tsx') },
         {
           loader: requireSession(client),
           ErrorBoundary: RoomFault,

@@ -1,5 +1,5 @@
 /** Where the link of the mail leads that confirms an address. */
-import { Link, useParams, useSearchParams } from 'react-router-dom';
+import { Link, useSearchParams } from 'react-router-dom';
 import { describeFault, useConfirmEmail } from '../../api/index.ts';
 import { ActButton, ActLink } from '../../components/Button.tsx';
 import { FormFault } from '../../components/Field.tsx';
@@ -7,9 +7,8 @@ import { paths } from '../paths.ts';
 import { SignInPage } from './SignInPage.tsx';
 
 export function Component() {
-  const parameters = useParams();
   const [search] = useSearchParams();
-  const token = parameters['token'] ?? search.get('token') ?? '';
+  const token = search.get('token') ?? '';
   const confirm = useConfirmEmail();
 
   if (confirm.isSuccess) {

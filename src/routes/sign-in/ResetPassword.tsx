@@ -2,7 +2,7 @@
 import { useState } from 'react';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useForm } from 'react-hook-form';
-import { Link, useParams } from 'react-router-dom';
+import { Link, useSearchParams } from 'react-router-dom';
 import { passwordResetSchema } from '../../../shared/contracts/people.ts';
 import { isProblem, useResetPassword } from '../../api/index.ts';
 import { ActButton, ActLink } from '../../components/Button.tsx';
@@ -12,7 +12,8 @@ import { showFaults } from '../formFaults.ts';
 import { SignInPage } from './SignInPage.tsx';
 
 export function Component() {
-  const { token = '' } = useParams();
+  const [search] = useSearchParams();
+  const token = search.get('token') ?? '';
   const reset = useResetPassword(token);
   const [formFault, setFormFault] = useState<string>();
   const { register, handleSubmit, setError, formState } = useForm({

@@ -12,19 +12,17 @@ import { paths, safeNext } from '../paths.ts';
 import { showFaults } from '../formFaults.ts';
 import { SignInPage } from './SignInPage.tsx';
 
-/** What the identity provider's way back reports in `?fault=`. */
+/** What the way back from the identity provider reports in `?problem=`. */
 const PROVIDER_FAULTS: Record<string, string> = {
-  refused: 'GitHub did not confirm who you are. Nothing has been changed; try again.',
-  denied: 'You turned the sign-in down at GitHub. Nothing has been changed.',
-  unavailable:
-    'GitHub cannot be reached at the moment. Sign in with e-mail and password, or later.',
+  'not-confirmed': 'GitHub did not confirm who you are. Nothing has been changed; try again.',
+  'no-provider': 'Signing in with GitHub is not set up on this site. Use e-mail and password.',
 };
 
 export function Component() {
   const session = useSession();
   const [search] = useSearchParams();
   const next = safeNext(search.get('next'));
-  const providerFault = search.get('fault');
+  const providerFault = search.get('problem');
   const navigate = useNavigate();
   const signIn = useSignIn();
   const [formFault, setFormFault] = useState<string>();
