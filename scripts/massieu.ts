@@ -23,7 +23,7 @@ try {
   if (!args) {
     process.stdout.write(USAGE);
   } else {
-    const { output, status } = run(args, readSource(args.file));
+    const { output, status } = await run(args, readSource(args.file));
     process.stdout.write(output);
     process.exitCode = status;
   }

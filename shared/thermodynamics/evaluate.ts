@@ -47,8 +47,9 @@ export function evaluate(
     hint = '',
     severity: Diagnostic['severity'] = 'error',
   ): void => {
+    // The fault is none of the text: it stands nowhere in it.
     const span = { start: 0, end: 0 };
-    diagnostics.push({ code, severity, span, line: 1, column: 1, message, hint, repairs: [] });
+    diagnostics.push({ code, severity, span, line: 0, column: 0, message, hint, repairs: [] });
   };
 
   const naturals = model.surroundings.naturals;

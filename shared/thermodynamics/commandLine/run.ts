@@ -3,8 +3,6 @@ import type { ClaimResult, Verification } from '../../contracts/derivation.ts';
 import type { Diagnostic } from '../../language/diagnostic.ts';
 import { derive } from '../derive.ts';
 import { evaluate } from '../evaluate.ts';
-import { verify } from '../verification/index.ts';
-import { preciseValue } from '../verification/preciseValue.ts';
 import type { Arguments } from './arguments.ts';
 import { readAssignments } from './assignments.ts';
 import { alignOnPoint, figure, table } from './table.ts';
@@ -15,7 +13,7 @@ export interface Outcome {
 }
 
 /** Runs one command on a source text. */
-export function run(args: Arguments, source: string): Outcome {
+export async function run(args: Arguments, source: string): Promise<Outcome> {
   switch (args.command) {
     case 'properties':
       return properties(args, source);
@@ -51,12 +49,11 @@ function outcome(
 
 function diagnosticWords(diagnostics: readonly Shown[], file: string): string {
   return diagnostics
-    .map(({ severity, line, column, message, hint, code }) =>
-      [
-        `${file}:${line}:${column}: ${severity}: ${message} (${code})`,
-        ...(hint === '' ? [] : [`  ${hint}`]),
-      ].join('\n'),
-    )
+    .map(({ severity, line, column, message, hint, code }) => {
+      const place = line > 0 ? `${file}:${line}:${column}: ` : '';
+      return [`${place}${severity}: ${message} (${code})`, ...(hint === '' ? [] : [`  ${hint}`])];
+    })
+    .flat()
     .join('\n');
 }
 
@@ -79,7 +76,7 @@ function properties(args: Arguments, source: string): Outcome {
   );
 }
 
-function evaluateAt(args: Arguments, source: string): Outcome {
+async function evaluateAt(args: Arguments, source: string): Promise<Outcome> {
   const { diagnostics, model } = derive(source, { properties: [] });
   const list: Shown[] = diagnostics.map(shown);
   if (!model) return outcome(args, list, { values: [] }, []);
@@ -87,9 +84,11 @@ function evaluateAt(args: Arguments, source: string): Outcome {
   const state = readAssignments(args.at, variables);
   const overrides = readAssignments(args.with, quantities);
   for (const message of [...state.faults, ...overrides.faults]) {
-    list.push({ code: 'state', severity: 'error', line: 1, column: 1, message, hint: '' });
+    list.push({ code: 'state', severity: 'error', line: 0, column: 0, message, hint: '' });
   }
   if (isFault(list)) return outcome(args, list, { values: [] }, []);
+  // Loaded where it is needed only: the library of many digits takes longer than most derivations.
+  const { preciseValue } = await import('../verification/preciseValue.ts');
   const result = evaluate(model, state.values, overrides.values, args.quantities, preciseValue);
   list.push(...result.diagnostics.map(shown));
   const figures = alignOnPoint(result.values.map(({ value }) => figure(value)));
@@ -97,12 +96,13 @@ function evaluateAt(args: Arguments, source: string): Outcome {
   return outcome(args, list, { values: result.values }, [table(rows)]);
 }
 
-function check(args: Arguments, source: string): Outcome {
+async function check(args: Arguments, source: string): Promise<Outcome> {
   const { diagnostics, derivation, model } = derive(source);
   const list: Shown[] = diagnostics.map(shown);
   if (!derivation || !model) {
     return outcome(args, list, { claims: [], verification: null }, []);
   }
+  const { verify } = await import('../verification/index.ts');
   const verification = verify(model);
   for (const { title, status, detail, line } of derivation.claims) {
     if (status !== 'failed') continue;
