@@ -159,11 +159,11 @@ async function main() {
     NODE_ENV: forDevelopment ? 'development' : 'production',
     DATABASE_URL: services.postgres.url,
     REDIS_URL: services.redis.url,
-    SESSION_SECRET: process.env.SESSION_SECRET ?? secret.sessionSecret,
+    SESSION_SECRET: process.env.SESSION_SECRET || secret.sessionSecret,
     HOST: '127.0.0.1',
     PORT: String(port),
-    PUBLIC_URL: process.env.PUBLIC_URL ?? address,
-    SMTP_URL: process.env.SMTP_URL ?? `smtp://127.0.0.1:${mailPort}`,
+    PUBLIC_URL: process.env.PUBLIC_URL || address,
+    SMTP_URL: process.env.SMTP_URL || `smtp://127.0.0.1:${mailPort}`,
     ...identitySettings(fakePort, secret.identitySecret),
   };
 
@@ -207,9 +207,10 @@ async function main() {
 
   say(`\nMassieu is ready after ${since(beginning)}: ${environment.PUBLIC_URL}`);
   if (environment.IDENTITY_PROVIDER_IS_LOCAL === 'true') {
-    say('Sign in with "Continue with GitHub" and choose one of the people of the demonstration,');
+    say('Choose "Sign in with GitHub": a local stand-in offers the people of the demonstration,');
     say('which is invented. Nothing leaves this machine.');
   }
+  if (!process.env.SMTP_URL) say(`Mail is kept at http://127.0.0.1:${fakePort}/letters`);
   say(`Logs are in ${logs}. Ctrl-C ends everything.`);
 }
 
