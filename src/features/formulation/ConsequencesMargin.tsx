@@ -1,0 +1,101 @@
+/** What follows from the formulation, beside it: properties, warnings, claims. */
+import type { Diagnostic } from '../../../shared/language/diagnostic.ts';
+import {
+  Margin,
+  Note,
+  ScrollingFormula,
+  SealMark,
+  SmallHeading,
+  classes,
+} from '../../components/index.ts';
+import type { LiveDerivation } from '../../workers/useLiveDerivation.ts';
+
+/** The margin shows the first few; the Properties section has all. */
+const SHOWN = ['p', 'U', 'S', 'A', 'mu', 'C_V', 'C_p', 'N', 'Z'];
+const MOST_SHOWN = 7;
+const OUTCOME = { passed: 'holds', failed: 'does not hold', undecided: 'not decided' } as const;
+
+export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) {
+  const { derivation, diagnostics, isStale, milliseconds, failure, source } = live;
+  const faults = diagnostics.filter(({ severity }) => severity === 'error');
+  const remarks = diagnostics.filter(({ severity }) => severity !== 'error');
+  const shown = (derivation?.properties ?? [])
+    .filter(({ symbol }) => SHOWN.includes(symbol))
+    .sort((a, b) => SHOWN.indexOf(a.symbol) - SHOWN.indexOf(b.symbol))
+    .slice(0, MOST_SHOWN);
+  const lines = source === undefined ? 0 : source.trimEnd().split('\n').length;
+  const aside =
+    milliseconds === undefined || isStale
+      ? undefined
+      : `as of line ${lines} · ${Math.round(milliseconds)} ms`;
+  return (
+    <Margin label="Consequences">
+      <SmallHeading aside={aside}>Consequences</SmallHeading>
+      {source === undefined && <p role="status">Deriving for the first time</p>}
+      <dl
+        data-stale={isStale || undefined}
+        className={classes(isStale && '[&_*]:!text-ink opacity-[0.62]')}
+      >
+        {shown.map((property) => (
+          <div
+            key={property.symbol}
+            className="border-rule flex items-center gap-14 border-b border-dotted py-8"
+          >
+            <dt className="text-ink-3 min-w-38 flex-none" title={property.name}>
+              <ScrollingFormula
+                tex={property.symbolTex}
+                text={property.symbol}
+                label={property.name}
+              />
+            </dt>
+            <dd className="text-ink min-w-0 flex-1">
+              <ScrollingFormula tex={property.tex} text={property.text} label={property.name} />
+            </dd>
+          </div>
+        ))}
+      </dl>
+      {failure !== undefined && (
+        <Note tone="cinnabar" role="status">
+          {failure} What is shown follows from the text before.
+        </Note>
+      )}
+      {failure === undefined && faults.length > 0 && (
+        <Note tone="cinnabar" role="status">
+          {linesInWords(faults)} must be mended before{' '}
+          {derivation ? 'these follow again' : 'anything follows'}.
+          {derivation && ' They show the last sound text.'}
+        </Note>
+      )}
+      {remarks.map((remark) => (
+        <Note key={`${remark.code} ${remark.span.start}`} tone="ochre">
+          <b className="text-ochre">Line {remark.line}.</b> {remark.message} {remark.hint}
+        </Note>
+      ))}
+      {derivation && derivation.claims.length > 0 && (
+        <>
+          <h3 className="text-note text-ink mt-22 font-[560]">Claims</h3>
+          <ul className={classes(isStale && '[&_*]:!text-ink opacity-[0.62]')}>
+            {derivation.claims.map((claim) => (
+              <li key={claim.line} className="flex flex-wrap items-baseline gap-x-8 py-2">
+                <SealMark status={claim.status} />
+                {claim.title || claim.text}
+                <span className="text-label text-ink-3 font-mono">
+                  {OUTCOME[claim.status]}
+                  {claim.method && `, ${claim.method}`}
+                </span>
+                {claim.status === 'failed' && <span className="w-full">{claim.detail}</span>}
+              </li>
+            ))}
+          </ul>
+        </>
+      )}
+    </Margin>
+  );
+}
+
+/** `Line 10`, `Lines 10 and 12`. */
+function linesInWords(faults: readonly Diagnostic[]): string {
+  const lines = [...new Set(faults.map(({ line }) => line))].sort((a, b) => a - b);
+  const last = lines.pop();
+  return lines.length === 0 ? `Line ${last}` : `Lines ${lines.join(', ')} and ${last}`;
+}

@@ -1,0 +1,2 @@
+/** The section in which a formulation is written beside its consequences. */
+export { Formulation } from './Formulation.tsx';

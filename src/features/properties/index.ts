@@ -1,0 +1,2 @@
+/** The section with the typeset sheet of everything that follows from a version. */
+export { Properties } from './Properties.tsx';
