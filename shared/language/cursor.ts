@@ -50,6 +50,18 @@ export class Cursor {
     return this.token?.kind === 'operator' && this.token.value === value;
   }
 
+  /** True where one of the operators stands anywhere outside braces. */
+  hasOperator(...values: string[]): boolean {
+    let depth = 0;
+    for (const { kind, value } of this.tokens) {
+      if (kind !== 'operator') continue;
+      if (value === '{') depth++;
+      else if (value === '}') depth--;
+      else if (depth === 0 && values.includes(value)) return true;
+    }
+    return false;
+  }
+
   isWord(value: string): boolean {
     return this.token?.kind === 'name' && this.token.value === value;
   }

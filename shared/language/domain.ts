@@ -15,15 +15,35 @@ import { compile } from '../numerics/compile.ts';
 /** Values of symbols at the dilute state, in SI units. */
 export type DiluteState = ReadonlyMap<string, number>;
 
-/** The relations, each once, in the order in which the expression is walked. */
-export function domainOf(e: Expression, dilute: DiluteState): Relation[] {
+/**
+ * The relations, each once, in the order in which the expression is walked. What is positive by its
+ * nature is not repeated, save for the `named` symbols (order parameters), whose ends matter.
+ */
+export function domainOf(
+  e: Expression,
+  dilute: DiluteState,
+  named: readonly Expression[] = [],
+): Relation[] {
   const relations = new Map<string, Relation>();
   const seen = new Set<Expression>();
   const bound = new Set<Expression>();
+  const keep = (relation: Relation): void => {
+    relations.set(`${relation.left.id} ${relation.sign} ${relation.right.id}`, relation);
+  };
   const demand = (x: Expression): void => {
+    if (named.includes(x)) keep({ left: x, sign: '>', right: C.zero });
     if (isPositive(x) || x.kind === 'number' || [...symbolsOf(x)].some((s) => bound.has(s))) return;
+    if (x.kind === 'abbreviation') {
+      demand(x.definition);
+      return;
+    }
     if (x.kind === 'power' && x.exponent.kind === 'number') {
       demand(x.base);
+      return;
+    }
+    const exponent = besideOne(x);
+    if (exponent) {
+      demand(exponent);
       return;
     }
     if (x.kind === 'product') {
@@ -34,10 +54,10 @@ export function domainOf(e: Expression, dilute: DiluteState): Relation[] {
         return;
       }
     }
-    const relation = arranged(x);
-    relations.set(`${relation.left.id} ${relation.sign} ${relation.right.id}`, relation);
+    keep(arranged(x));
   };
   const demandNotZero = (x: Expression): void => {
+    if (x.kind === 'abbreviation') demandNotZero(x.definition);
     if (isPositive(x) || x.kind !== 'sum') return;
     const value = valueAt(x, dilute);
     if (value === undefined || value === 0) return;
@@ -71,6 +91,16 @@ export function domainOf(e: Expression, dilute: DiluteState): Relation[] {
   };
   visit(e);
   return [...relations.values()];
+}
+
+/** y where the expression is 1 − exp(−y) or exp(y) − 1, which are positive with y. */
+function besideOne(x: Expression): Expression | undefined {
+  const [term] = x.kind === 'sum' ? x.terms : [];
+  if (x.kind !== 'sum' || !term || x.terms.length !== 1) return undefined;
+  const { coefficient, rest } = C.splitCoefficient(term);
+  const [y] = rest.kind === 'call' && rest.name === 'exp' ? rest.arguments : [];
+  if (!y || !Q.equals(coefficient, Q.negate(x.constant))) return undefined;
+  return Q.sign(coefficient) > 0 ? y : C.negate(y);
 }
 
 /** x > 0 with the negative terms on the other side: V > N b, theta < 1. */

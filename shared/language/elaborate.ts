@@ -9,6 +9,7 @@ import { elaborateClaims } from './claims.ts';
 import { declaredValue, type ConstantValue, type KnownValues } from './constantValue.ts';
 import { collectDeclarations, type Declarations } from './declarations.ts';
 import { closed, PURE } from './dimensionCheck.ts';
+import { divergence } from './divergence.ts';
 import { domainOf } from './domain.ts';
 import { ExpressionElaborator } from './elaborateExpression.ts';
 import type { Findings } from './findings.ts';
@@ -87,7 +88,10 @@ class Elaboration {
     const molar = this.reports('molar');
     const reports = this.reports('report');
     const claims = elaborateClaims(declarations.of('claim'), this.expressions, scope);
-    this.warnOfUnusedNames();
+    if (findings.errorCount === 0) {
+      this.refuseDivergence(quantities, orderParameters);
+      this.warnOfUnusedNames();
+    }
     if (findings.errorCount > 0 || !stated) return { formulation: undefined, scope };
     const { ensemble, species, variables } = declarations;
     const formulation: Formulation = {
@@ -106,7 +110,11 @@ class Elaboration {
       molar,
       reports,
       claims,
-      domain: domainOf(stated.lnFunction, this.diluteState(quantities, orderParameters)),
+      domain: domainOf(
+        stated.lnFunction,
+        this.diluteState(quantities, orderParameters),
+        orderParameters.map(({ symbol }) => symbol),
+      ),
       nameOrder: nameOrder(this.trees(), [
         ...quantities.map(({ name }) => name),
         ...orderParameters.map(({ name }) => name),
@@ -465,6 +473,30 @@ class Elaboration {
     });
   }
 
+  private refuseDivergence(
+    quantities: readonly DeclaredQuantity[],
+    orderParameters: readonly OrderParameter[],
+  ): void {
+    const { openBinders } = this.expressions;
+    if (openBinders.length === 0) return;
+    const values = this.knownNumbers(quantities, orderParameters);
+    const states = TRIAL_STATES.map((roles) => {
+      const state = new Map(values);
+      for (const { name, role } of this.declarations.variables) state.set(name, roles[role]);
+      return state;
+    });
+    for (const { tree, binder } of openBinders) {
+      const end = divergence(binder, states);
+      if (end === undefined) continue;
+      const name = tree.variable.spelled;
+      if (tree.what === 'integral') {
+        this.findings.add('divergent-integral', tree.span, { name, end });
+      } else {
+        this.findings.add('divergent-sum', tree.span, { what: tree.what, name });
+      }
+    }
+  }
+
   private warnOfUnusedNames(): void {
     const { declarations, scope, findings } = this;
     const mass = dimension(0, 1);
@@ -487,22 +519,29 @@ class Elaboration {
     }
   }
 
+  /** The numbers behind the names that are no natural variables; order parameters in mid-range. */
+  private knownNumbers(
+    quantities: readonly DeclaredQuantity[],
+    orderParameters: readonly OrderParameter[],
+  ): Map<string, number> {
+    const numbers = new Map<string, number>();
+    for (const constant of this.scope.naturalConstants()) {
+      numbers.set(constant.name, Q.toNumber(constant.value));
+    }
+    for (const { name, value } of quantities) numbers.set(name, Q.toNumber(value));
+    for (const { name, lower, upper } of orderParameters) {
+      numbers.set(name, Q.toNumber(Q.divide(Q.add(lower, upper), Q.rational(2))));
+    }
+    return numbers;
+  }
+
   /** Values at which a dilute system exists, for the sign of denominators. */
   private diluteState(
     quantities: readonly DeclaredQuantity[],
     orderParameters: readonly OrderParameter[],
   ): Map<string, number> {
-    const state = new Map<string, number>();
-    for (const constant of this.scope.naturalConstants()) {
-      state.set(constant.name, Q.toNumber(constant.value));
-    }
-    for (const { name, value } of quantities) state.set(name, Q.toNumber(value));
-    for (const { name, lower, upper } of orderParameters) {
-      state.set(name, Q.toNumber(Q.divide(Q.add(lower, upper), Q.rational(2))));
-    }
-    for (const { name, role } of this.declarations.variables) {
-      state.set(name, DILUTE[role]);
-    }
+    const state = this.knownNumbers(quantities, orderParameters);
+    for (const { name, role } of this.declarations.variables) state.set(name, DILUTE[role]);
     return state;
   }
 
@@ -539,6 +578,29 @@ const DILUTE: Readonly<Record<Role, number>> = {
   energy: 1e-19,
   field: 1,
 };
+
+/** Widely different states, so that what has no value at any of them has none at all. */
+const TRIAL_STATES: readonly Readonly<Record<Role, number>>[] = [
+  DILUTE,
+  {
+    temperature: 10,
+    extent: 1e-3,
+    number: 1e22,
+    'chemical potential': -1e-16,
+    pressure: 1e5,
+    energy: 1e2,
+    field: 0.01,
+  },
+  {
+    temperature: 1e5,
+    extent: 1e-9,
+    number: 1e3,
+    'chemical potential': -1e-20,
+    pressure: 1e9,
+    energy: 1e-12,
+    field: -10,
+  },
+];
 
 /** The value without the uncertainty that a plain number may carry. */
 function withoutUncertainty(tree: ExpressionTree): {

@@ -15,6 +15,7 @@ import { describeDimension } from '../units/formatDimension.ts';
 import { parseUnit, type UnitValue } from '../units/parseUnit.ts';
 import type { Repair, Span } from './diagnostic.ts';
 import { closed, DimensionSolver, PURE, type OpenDimension } from './dimensionCheck.ts';
+import type { OpenBinder } from './divergence.ts';
 import type { Findings } from './findings.ts';
 import { hasFactorial, logarithmOf, type Factorials } from './logarithm.ts';
 import { DEEPEST_EXPRESSION, LONGEST_NUMBER_BITS, MOST_PARTS } from './limits.ts';
@@ -74,6 +75,8 @@ export class ExpressionElaborator {
   readonly findings: Findings;
   readonly solver = new DimensionSolver();
   factorials: Factorials = 'Stirling';
+  /** Sums and integrals that may have no value, for when the values of constants are known. */
+  readonly openBinders: { readonly tree: BinderTree; readonly binder: OpenBinder }[] = [];
   private readonly names: Names;
   private readonly local = new Map<string, Entity[]>();
   private parts = 0;
@@ -149,7 +152,9 @@ export class ExpressionElaborator {
   /** Words for a dimension: `an energy, J`. */
   words(d: OpenDimension): string {
     const known = this.solver.settle(d);
-    return known ? describeDimension(known) : 'raised to an exponent that does not cancel';
+    return known
+      ? describeDimension(known)
+      : 'no number: a unit in it has an exponent that does not cancel';
   }
 
   private visit(tree: ExpressionTree): Typed | undefined {
@@ -279,7 +284,8 @@ export class ExpressionElaborator {
     const multiplicands: Expression[] = [];
     let d = PURE;
     let bits = 0;
-    let isSound = true;
+    // What it would mean is not guessed, but its factors are looked at.
+    let isSound = tree.isAmbiguous !== true;
     for (const { joint, factor } of tree.factors) {
       const typed = this.finite(factor);
       if (!typed) {
@@ -502,7 +508,8 @@ export class ExpressionElaborator {
     } else if (!this.areWholeEnds(tree, from, to)) {
       return undefined;
     }
-    const isAbove = isIntegral ? from.e === C.zero || isPositive(from.e) : isPositive(from.e);
+    // An index from 0 counts as positive: 2 J + 1 is, and J itself vanishes at one point only.
+    const isAbove = from.e === C.zero || isPositive(from.e);
     const variable = C.symbol(this.freshName(tree.variable), {
       integer: !isIntegral,
       positive: isAbove && from.e !== C.infinity,
@@ -513,6 +520,12 @@ export class ExpressionElaborator {
     const body = this.finite(tree.body);
     this.local.set(tree.variable.name, stack);
     if (!body) return undefined;
+    if (to.e === C.infinity || (isIntegral && from.e === C.zero)) {
+      this.openBinders.push({
+        tree,
+        binder: { what: tree.what, variable, from: from.e, to: to.e, body: body.e },
+      });
+    }
     if (isIntegral) {
       return {
         e: C.integral(variable, from.e, to.e, body.e),

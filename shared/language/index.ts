@@ -1,9 +1,8 @@
 /** The formulation language: from source text to checked formulations, and what editors need. */
 import type { Diagnostic } from './diagnostic.ts';
-import { elaborate } from './elaborate.ts';
-import { Findings } from './findings.ts';
+import { tidy } from './format.ts';
 import type { Formulation } from './formulation.ts';
-import { parse } from './parser.ts';
+import { study } from './study.ts';
 import type { SourceTree } from './syntax.ts';
 
 export interface Analysis {
@@ -15,15 +14,20 @@ export interface Analysis {
 
 /** Reads and checks a source text. Never throws, whatever the text. */
 export function analyse(source: string): Analysis {
-  const findings = new Findings(source);
-  const tree = parse(source, findings);
-  const { formulation } = elaborate(tree, findings, source);
-  return {
-    formulation: findings.errorCount === 0 ? formulation : undefined,
-    diagnostics: findings.all(),
-    tree,
-  };
+  const { formulation, diagnostics, tree } = study(source);
+  return { formulation, diagnostics, tree };
 }
 
-export type { Diagnostic } from './diagnostic.ts';
+/** The text with even spacing; unchanged where it cannot be read. */
+export function format(source: string): string {
+  return tidy(source);
+}
+
+export { CATALOGUE, type CatalogueEntry, type Code } from './catalogue.ts';
+export type { Diagnostic, Repair, Severity, Span } from './diagnostic.ts';
 export type { Formulation } from './formulation.ts';
+export { parseExpressionFor, type ParsedFor, type ParsedStatement } from './parseExpressionFor.ts';
+export { parseState, type ParsedState, type StateValue } from './parseState.ts';
+export { completionsAt, type Completion } from './completions.ts';
+export { hoverAt, type Hover } from './hover.ts';
+export { tokensOf, type HighlightKind, type HighlightToken } from './highlight.ts';

@@ -5,6 +5,7 @@
  * names are sorted along the arrows, a later arrow that would close a circle being left out. Where
  * the arrows leave a choice, pi comes first, then what the author declared, then N, k, T, V.
  */
+import { isBuiltInFunction } from './parseExpression.ts';
 import { visitNames, partsOf } from './walkTree.ts';
 import type { ExpressionTree, ProductTree } from './syntax.ts';
 
@@ -43,7 +44,9 @@ export function nameOrder(trees: readonly ExpressionTree[], declared: readonly s
   const met = new Set<string>();
   for (const tree of trees) {
     collectPairs(tree, pairs);
-    visitNames(tree, ({ name }) => met.add(name));
+    visitNames(tree, ({ name }) => {
+      if (!isBuiltInFunction(name)) met.add(name);
+    });
   }
   const all = [
     'pi',

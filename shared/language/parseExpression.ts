@@ -100,18 +100,23 @@ export class ExpressionParser {
     const { cursor } = this;
     const start = cursor.start;
     const factors: Factor[] = [{ joint: 'first', factor: this.power() }];
+    let isAmbiguous = false;
+    const refuse = (): void => {
+      this.refuseDivision(factors);
+      isAmbiguous = true;
+    };
     for (;;) {
       if (cursor.isOperator('*') || cursor.isOperator('/')) {
         const isDivision = cursor.isOperator('/');
         cursor.advance();
         const factor = this.signedPower();
         factors.push({ joint: isDivision ? '/' : '*', factor });
-        if (isDivision && factors.at(-2)?.joint === '/') this.refuseDivision(factors);
+        if (isDivision && factors.at(-2)?.joint === '/') refuse();
       } else if (this.beginsFactor(cursor.token)) {
         const last = factors.at(-1);
         const factor = this.power();
         factors.push({ joint: 'beside', factor });
-        if (last?.joint === '/' && !isFraction(factors)) this.refuseDivision(factors);
+        if (last?.joint === '/' && !isFraction(factors)) refuse();
         else if (last) this.refuseAdjacentNumbers(last.factor, factor);
       } else {
         break;
@@ -119,7 +124,12 @@ export class ExpressionParser {
     }
     const [first] = factors;
     if (first && factors.length === 1) return first.factor;
-    return { kind: 'product', factors, span: this.from(start) };
+    return {
+      kind: 'product',
+      factors,
+      ...(isAmbiguous ? { isAmbiguous } : {}),
+      span: this.from(start),
+    };
   }
 
   private beginsFactor(token: Token | undefined): boolean {

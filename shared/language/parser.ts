@@ -21,19 +21,24 @@ import { isReserved, STATEMENT_WORDS, type Token } from './token.ts';
 /** Names that state the partition function, or `q` from which it is built. */
 const FUNCTION_NAMES: ReadonlySet<string> = new Set(['q', ...Object.values(PARTITION_FUNCTIONS)]);
 
+export interface Parsed {
+  readonly tree: SourceTree;
+  readonly tokens: readonly Token[];
+  /** Names that are followed by parentheses because they are functions or lists. */
+  readonly callable: ReadonlySet<string>;
+}
+
 /** Reads a whole text. Never throws; what could not be read is reported and left out. */
-export function parse(source: string, findings: Findings): SourceTree {
+export function parse(source: string, findings: Findings): Parsed {
   if (isTooLong(source)) {
     findings.add('too-long', { start: 0, end: 0 });
-    return { statements: [], title: '' };
+    return { tree: { statements: [], title: '' }, tokens: [], callable: new Set() };
   }
   const tokens = lex(source, findings);
   const parts = splitStatements(tokens);
   const callable = callableNames(parts);
-  return {
-    statements: parts.map((part) => parseStatement(part, callable, findings)),
-    title: titleOf(tokens),
-  };
+  const statements = parts.map((part) => parseStatement(part, callable, findings));
+  return { tree: { statements, title: titleOf(tokens) }, tokens, callable };
 }
 
 /** UTF-8 bytes, counted without an encoder: shared code knows none. */
@@ -53,8 +58,7 @@ function titleOf(tokens: readonly Token[]): string {
   return first?.kind === 'comment' ? first.value.replace(/^#+/, '').trim() : '';
 }
 
-/** Names that are followed by parentheses because they are functions or lists. */
-export function callableNames(parts: readonly (readonly Token[])[]): Set<string> {
+function callableNames(parts: readonly (readonly Token[])[]): Set<string> {
   const names = new Set<string>();
   for (const [word, name, bracket] of parts) {
     if (name?.kind !== 'name') continue;

@@ -43,6 +43,8 @@ export interface ProductTree extends Placed {
     readonly joint: 'first' | 'beside' | '*' | '/';
     readonly factor: ExpressionTree;
   }[];
+  /** A factor stands beside a divisor, which has been reported: it may mean two things. */
+  readonly isAmbiguous?: true;
 }
 
 export interface PowerTree extends Placed {
