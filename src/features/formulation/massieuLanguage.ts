@@ -1,6 +1,6 @@
 /** The formulation language as the editor knows it: colours, brackets, completion, hover. */
 import type * as Monaco from 'monaco-editor/editor/editor.api';
-import { completionsAt, hoverAt } from '../../../shared/language/index.ts';
+import { completionsAt, hoverAt, type Span } from '../../../shared/language/index.ts';
 
 export const LANGUAGE = 'massieu';
 
@@ -41,27 +41,18 @@ export function registerLanguage(monaco: typeof Monaco): void {
     },
   });
   monaco.languages.registerCompletionItemProvider(LANGUAGE, {
-    triggerCharacters: ['[', ' '],
-    provideCompletionItems(model, position, context) {
+    triggerCharacters: ['['],
+    provideCompletionItems(model, position) {
       const source = model.getValue();
       const offset = model.getOffsetAt(position);
-      const word = model.getWordUntilPosition(position);
-      // A space alone opens the list only where a statement or a unit begins.
-      const isOpening = context.triggerCharacter === ' ' && word.word === '';
-      const completions = isOpening ? [] : completionsAt(source, offset);
-      const range = {
-        startLineNumber: position.lineNumber,
-        endLineNumber: position.lineNumber,
-        startColumn: word.startColumn,
-        endColumn: word.endColumn,
-      };
+      const completions = completionsAt(source, offset);
       return {
-        suggestions: completions.map(({ label, insert, kind, detail, description }) => ({
+        suggestions: completions.map(({ label, text, span, kind, detail, description }) => ({
           label: { label, description: detail },
-          insertText: insert,
+          insertText: text,
           kind: KINDS[kind]?.(monaco) ?? monaco.languages.CompletionItemKind.Text,
           documentation: description,
-          range,
+          range: rangeOf(model, span),
         })),
       };
     },
@@ -70,20 +61,27 @@ export function registerLanguage(monaco: typeof Monaco): void {
     provideHover(model, position) {
       const found = hoverAt(model.getValue(), model.getOffsetAt(position));
       if (!found) return null;
-      const start = model.getPositionAt(found.span.start);
-      const end = model.getPositionAt(found.span.end);
       return {
-        range: {
-          startLineNumber: start.lineNumber,
-          startColumn: start.column,
-          endLineNumber: end.lineNumber,
-          endColumn: end.column,
-        },
+        range: rangeOf(model, found.span),
         // Plain text: what an author wrote must not be read as Markdown.
-        contents: found.lines.map((line) => ({ value: escapeMarkdown(line), isTrusted: false })),
+        contents: [found.title, ...found.lines].map((line) => ({
+          value: escapeMarkdown(line),
+          isTrusted: false,
+        })),
       };
     },
   });
+}
+
+function rangeOf(model: Monaco.editor.ITextModel, span: Span): Monaco.IRange {
+  const start = model.getPositionAt(span.start);
+  const end = model.getPositionAt(span.end);
+  return {
+    startLineNumber: start.lineNumber,
+    startColumn: start.column,
+    endLineNumber: end.lineNumber,
+    endColumn: end.column,
+  };
 }
 
 const KINDS: Readonly<
@@ -93,7 +91,7 @@ const KINDS: Readonly<
   function: (monaco) => monaco.languages.CompletionItemKind.Function,
   unit: (monaco) => monaco.languages.CompletionItemKind.Unit,
   name: (monaco) => monaco.languages.CompletionItemKind.Variable,
-  constant: (monaco) => monaco.languages.CompletionItemKind.Constant,
+  keyword: (monaco) => monaco.languages.CompletionItemKind.Keyword,
 };
 
 function escapeMarkdown(text: string): string {

@@ -3,8 +3,8 @@ import { differentiate } from '../../../shared/algebra/differentiate.ts';
 import type { Expression, SymbolNode } from '../../../shared/algebra/expression.ts';
 import { symbolsOf } from '../../../shared/algebra/traverse.ts';
 import type { Derivation } from '../../../shared/contracts/derivation.ts';
-import { compile } from '../../../shared/numerics/index.ts';
-import { fromJson } from '../../../shared/print/index.ts';
+import { compile } from '../../../shared/numerics/compile.ts';
+import { fromJson } from '../../../shared/print/json.ts';
 import type { Fluid } from './criticalPoint.ts';
 
 /** Exact by the definition of the SI. */
@@ -32,17 +32,20 @@ export function compileFluid(derivation: Derivation): Fluid | undefined {
 
   const constants = new Map([...Object.entries(derivation.values), [number, AVOGADRO] as const]);
   const evaluator = (expressions: readonly Expression[]): OfState => {
-    const names = [
-      ...new Set(expressions.flatMap((e) => [...symbolsOf(e)].map(({ name }) => name))),
-    ];
+    // π is none of the inputs: it is known to whoever evaluates.
+    const known = new Set([...constants.keys(), temperature, volume]);
+    const symbols = expressions.flatMap((e) => [...symbolsOf(e)].map(({ name }) => name));
+    const names = [...new Set(symbols)].filter((name) => known.has(name));
     const code = compile(expressions, names);
     const values = names.map((name) => constants.get(name) ?? Number.NaN);
+    const results = [Number.NaN, Number.NaN];
     const atTemperature = names.indexOf(temperature);
     const atVolume = names.indexOf(volume);
     return (t, v) => {
       if (atTemperature >= 0) values[atTemperature] = t;
       if (atVolume >= 0) values[atVolume] = v;
-      const [wanted, lnQ] = code(values);
+      code.into(values, results);
+      const [wanted, lnQ] = results;
       // Outside the domain ln Q has no value, though the pressure may seem to have one.
       return lnQ !== undefined && Number.isFinite(lnQ) ? (wanted ?? Number.NaN) : Number.NaN;
     };

@@ -21,6 +21,8 @@ const pressure = C.subtract(
 );
 const lnQ = C.sum([
   C.multiply(N, C.ln(free)),
+  // Contributions without V and π in them are part of every real formula.
+  C.multiply(N, C.ln(C.product([C.integer(2), C.pi, k, T]))),
   C.divide(C.multiply(a, C.square(N)), C.product([V, k, T])),
 ]);
 
