@@ -28,7 +28,7 @@ export function integrate(
     const { value, error } = integrate(f, b, a, tolerance);
     return { value: -value, error };
   }
-  const rule = substitution(a, b);
+  const rule = substitution(f, a, b);
   const at = (t: number): number => {
     const { x, weight } = rule(t);
     if (weight === 0 || !(x > a) || !(x < b)) return 0;
@@ -51,7 +51,11 @@ export function integrate(
 }
 
 /** x(t) and dx/dt that take −∞ < t < ∞ to the interval. */
-function substitution(a: number, b: number): (t: number) => { x: number; weight: number } {
+function substitution(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+): (t: number) => { x: number; weight: number } {
   const isFrom = Number.isFinite(a);
   const isTo = Number.isFinite(b);
   if (isFrom && isTo) {
@@ -70,8 +74,9 @@ function substitution(a: number, b: number): (t: number) => { x: number; weight:
   if (isFrom || isTo) {
     const end = isFrom ? a : b;
     const direction = isFrom ? 1 : -1;
+    const scale = scaleOf((distance) => f(end + direction * distance));
     return (t) => {
-      const distance = Math.exp((Math.PI / 2) * Math.sinh(t));
+      const distance = scale * Math.exp((Math.PI / 2) * Math.sinh(t));
       return {
         x: end + direction * distance,
         weight: distance * (Math.PI / 2) * Math.cosh(t),
@@ -82,4 +87,22 @@ function substitution(a: number, b: number): (t: number) => { x: number; weight:
     const u = (Math.PI / 2) * Math.sinh(t);
     return { x: Math.sinh(u), weight: Math.cosh(u) * (Math.PI / 2) * Math.cosh(t) };
   };
+}
+
+/**
+ * The distance about which an integrand over a half-line weighs most, in powers of 10^(1/3): the
+ * rule is dense there, be it at an ångström or at a light-year.
+ */
+function scaleOf(f: (distance: number) => number): number {
+  let scale = 1;
+  let largest = 0;
+  for (let k = -120; k <= 120; k++) {
+    const distance = 10 ** (k / 3);
+    const weight = Math.abs(f(distance)) * distance;
+    if (weight > largest && Number.isFinite(weight)) {
+      largest = weight;
+      scale = distance;
+    }
+  }
+  return scale;
 }

@@ -68,6 +68,7 @@ function preciseJet(
     return evaluatePrecisely(f, values);
   };
   const value = moved([]);
+  if (!value) return undefined;
   const gradient = at.map((x, i) => preciseDerivative((y) => moved([[i, y]]), x, 1));
   const hessian = at.map((x, i) =>
     at.map((y, j) => {
