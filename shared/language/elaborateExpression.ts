@@ -44,15 +44,16 @@ export interface Names {
   lnFunction(name: NameTree): Typed | undefined;
 }
 
-const depthKnown = new WeakMap<Expression, number>();
+/** By the serial number of the expression, which is never given twice. */
+const depthKnown: number[] = [];
 
 /** Levels of an expression, through the definitions of its abbreviations. */
 function depthOf(e: Expression): number {
-  const known = depthKnown.get(e);
+  const known = depthKnown[e.id];
   if (known !== undefined) return known;
   let depth = 0;
   for (const child of childrenOf(e)) depth = Math.max(depth, depthOf(child));
-  depthKnown.set(e, depth + 1);
+  depthKnown[e.id] = depth + 1;
   return depth + 1;
 }
 

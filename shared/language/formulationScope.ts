@@ -14,7 +14,6 @@ const positive = { positive: true };
 export class FormulationScope implements Names {
   readonly used = new Set<string>();
   readonly entities = new Map<string, Entity>();
-  readonly properties: ReadonlyMap<string, PropertyName>;
   findings: Findings;
   /** True in claims, reports and checks, where properties stand for what they are. */
   allowsProperties = false;
@@ -25,6 +24,7 @@ export class FormulationScope implements Names {
   private readonly setting: Setting;
   private readonly variables: readonly NaturalVariable[];
   private readonly constantsUsed = new Set<string>();
+  private propertiesKnown: ReadonlyMap<string, PropertyName> | undefined;
 
   constructor(
     setting: Setting,
@@ -36,7 +36,6 @@ export class FormulationScope implements Names {
     this.variables = variables;
     this.findings = findings;
     this.isCertain = isCertain;
-    this.properties = new Map(propertyNames(setting).map((one) => [one.name, one]));
     for (const { name, symbol, dimension } of variables) {
       this.entities.set(name, {
         kind: 'value',
@@ -45,6 +44,12 @@ export class FormulationScope implements Names {
       });
     }
     this.addTotals();
+  }
+
+  /** The properties that the setting has, by name. */
+  get properties(): ReadonlyMap<string, PropertyName> {
+    this.propertiesKnown ??= new Map(propertyNames(this.setting).map((one) => [one.name, one]));
+    return this.propertiesKnown;
   }
 
   /** Total number and mole fractions, where there are several species. */

@@ -7,6 +7,7 @@ import type { Token, TokenKind } from './token.ts';
 
 /** Digits, an uncertainty of the last digits in parentheses, a power of ten. */
 const NUMBER = /(\d+(?:\.(?!\.)\d*)?|\.\d+)(?:\((\d+)\))?([eE][+-]?\d+)?/y;
+const NAME = new RegExp(`${NAME_PART.source}+`, 'y');
 const OPERATOR = /->|\.\.|<=|>=|[-+*/^!=<>(){},;:]/y;
 
 /** Other characters that mean an operator. */
@@ -40,15 +41,18 @@ export function lex(source: string, findings: Findings): Token[] {
   };
   while (at < source.length) {
     const character = source[at] ?? '';
-    if (character === '\n') {
+    if (character === ' ') {
+      at++;
+    } else if (character === '\n') {
       push('newline', at + 1);
     } else if (/\s|\ufeff/.test(character)) {
       at++;
     } else if (character === '#') {
       push('comment', endOfLine(source, at));
     } else if (NAME_START.test(character)) {
-      let end = at + 1;
-      while (end < source.length && NAME_PART.test(source[end] ?? '')) end++;
+      NAME.lastIndex = at;
+      NAME.test(source);
+      const end = NAME.lastIndex;
       push('name', end, asciiName(source.slice(at, end)));
     } else if (/[\d.]/.test(character) && matches(NUMBER, source, at)) {
       const match = matches(NUMBER, source, at);

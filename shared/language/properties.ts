@@ -35,9 +35,11 @@ export function propertyNames({ extent, species, fields }: Setting): PropertyNam
   const pressure = divideDimensions(ENERGY, extent.dimension);
   const perPressure = divideDimensions(DIMENSIONLESS, pressure);
   const names: PropertyName[] = [];
+  const taken = new Set<string>();
   const add = (name: string, of: Dimension, description: string): void => {
-    if (!names.some((known) => known.name === name))
-      names.push({ name, dimension: of, description });
+    if (taken.has(name)) return;
+    taken.add(name);
+    names.push({ name, dimension: of, description });
   };
   const pressureName = equalDimensions(extent.dimension, VOLUME)
     ? 'pressure'

@@ -18,22 +18,56 @@ export function dimension(...exponents: number[]): Dimension {
   return BASE_UNITS.map((_, i) => Q.rational(exponents[i] ?? 0));
 }
 
+/**
+ * Results by operands: a text has few dimensions, and asks for their products again and again.
+ * Emptied when there are more than any text has.
+ */
+type Memory = Map<Dimension, Map<Dimension, Dimension>>;
+const products: Memory = new Map();
+const quotients: Memory = new Map();
+const powers = new Map<Dimension, Map<string, Dimension>>();
+const MOST_REMEMBERED = 500;
+
+function rowOf<K>(memory: Map<Dimension, Map<K, Dimension>>, of: Dimension): Map<K, Dimension> {
+  let row = memory.get(of);
+  if (!row || row.size > MOST_REMEMBERED) {
+    if (memory.size > MOST_REMEMBERED) memory.clear();
+    memory.set(of, (row = new Map<K, Dimension>()));
+  }
+  return row;
+}
+
 export function multiplyDimensions(a: Dimension, b: Dimension): Dimension {
-  return a.map((exponent, i) => Q.add(exponent, b[i] ?? Q.ZERO));
+  if (a === DIMENSIONLESS) return b;
+  if (b === DIMENSIONLESS) return a;
+  const row = rowOf(products, a);
+  let result = row.get(b);
+  if (!result) row.set(b, (result = a.map((e, i) => Q.add(e, b[i] ?? Q.ZERO))));
+  return result;
 }
 
 export function divideDimensions(a: Dimension, b: Dimension): Dimension {
-  return a.map((exponent, i) => Q.subtract(exponent, b[i] ?? Q.ZERO));
+  if (b === DIMENSIONLESS) return a;
+  const row = rowOf(quotients, a);
+  let result = row.get(b);
+  if (!result) row.set(b, (result = a.map((e, i) => Q.subtract(e, b[i] ?? Q.ZERO))));
+  return result;
 }
 
 export function powerDimension(a: Dimension, exponent: Rational): Dimension {
-  return a.map((e) => Q.multiply(e, exponent));
+  if (a === DIMENSIONLESS || Q.isOne(exponent)) return a;
+  if (Q.isZero(exponent)) return DIMENSIONLESS;
+  const row = rowOf(powers, a);
+  const key = Q.toText(exponent);
+  let result = row.get(key);
+  if (!result) row.set(key, (result = a.map((e) => Q.multiply(e, exponent))));
+  return result;
 }
 
 export function equalDimensions(a: Dimension, b: Dimension): boolean {
-  return a.every((exponent, i) => Q.equals(exponent, b[i] ?? Q.ZERO));
+  return a === b || a.every((exponent, i) => Q.equals(exponent, b[i] ?? Q.ZERO));
 }
 
 export function isDimensionless(a: Dimension): boolean {
-  return a.every(Q.isZero);
+  return a === DIMENSIONLESS || a.every(Q.isZero);
 }
