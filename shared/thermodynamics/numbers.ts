@@ -24,11 +24,6 @@ export function constantNumbersOf(formulation: Formulation): Map<string, number>
   return new Map([...constantsOf(formulation)].map(([name, value]) => [name, Q.toNumber(value)]));
 }
 
-/** A quantity that counts as zero beside others of the size `scale`. */
-export function agree(a: number, b: number, tolerance: number, scale = 0): boolean {
-  return Math.abs(a - b) <= tolerance * Math.max(Math.abs(a), Math.abs(b), scale);
-}
-
 /** `3.7e-49` in six figures for sentences. */
 export function inWords(value: number): string {
   return String(Number(value.toPrecision(6)));

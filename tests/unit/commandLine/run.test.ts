@@ -100,7 +100,7 @@ describe('massieu evaluate', () => {
   });
 });
 
-describe('massieu check', () => {
+describe('massieu check', { timeout: 60_000 }, () => {
   it('reports claims and verification', async () => {
     const outcome = await call('check f --json');
     expect(outcome.status).toBe(0);

@@ -69,7 +69,7 @@ describe('values from outside', () => {
     const title = `${check.id}: ${check.title} (${check.source})`;
     const pending = pendingReason(check);
     if (pending) it.todo(`${title} [pending: ${pending}]`);
-    else it(title, () => run(check));
+    else it(title, { timeout: 60_000 }, () => run(check));
   }
 });
 

@@ -5,7 +5,7 @@ import { verify } from '../../../shared/thermodynamics/verification/index.ts';
 import { verificationSchema } from '../../../shared/contracts/derivation.ts';
 import { fluid } from './fixtures.ts';
 
-describe('the verification of a sound model', () => {
+describe('the verification of a sound model', { timeout: 60_000 }, () => {
   const result = verify(createModel(fluid()));
 
   it('passes in every property and keeps to its contract', () => {
