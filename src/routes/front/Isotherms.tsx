@@ -2,9 +2,9 @@
 import { useMemo, useState } from 'react';
 import type { Derivation } from '../../../shared/contracts/derivation.ts';
 import { IsothermPlot } from './IsothermPlot.tsx';
-import { MOLAR_UNIT, portray, traceIsotherm } from './portrait.ts';
+import { MOLAR_UNIT, traceIsotherm } from './portrait.ts';
 import { MovingTemperature } from './MovingTemperature.tsx';
-import { useFluid } from './useFluid.ts';
+import { usePortrait } from './usePortrait.ts';
 
 const FIRST_REDUCED = 0.95;
 
@@ -15,8 +15,7 @@ export function Isotherms({
   readonly derivation: Derivation;
   readonly isStale: boolean;
 }) {
-  const fluid = useFluid(derivation);
-  const portrait = useMemo(() => (fluid ? portray(fluid) : undefined), [fluid]);
+  const { fluid, portrait, isFluid = true } = usePortrait(derivation) ?? {};
   const [reduced, setReduced] = useState(FIRST_REDUCED);
 
   const critical = portrait?.critical;
@@ -30,7 +29,8 @@ export function Isotherms({
     };
   }, [fluid, portrait, critical, temperature]);
 
-  if (!fluid) return null;
+  if (!isFluid) return null;
+  if (!fluid) return <div className="mt-14 min-h-[360px]" />;
   if (!portrait) {
     return (
       <p className="text-note text-ink-2 py-14">
