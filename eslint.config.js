@@ -228,6 +228,8 @@ export default tseslint.config(
     files: ['src/**/*.{ts,tsx}'],
     extends: [jsxA11y.flatConfigs.recommended, reactHooks.configs.flat.recommended],
     rules: {
+      // What scrolls must be reachable by the keyboard: a box with a name may take the focus.
+      'jsx-a11y/no-noninteractive-tabindex': ['error', { roles: ['region', 'group', 'tabpanel'] }],
       'no-restricted-imports': [
         'error',
         {

@@ -149,9 +149,9 @@ async function main() {
     if (counts.failed > 0) failures.push(name);
   };
 
-  for (const name of Object.keys(CHECKS)) {
-    if (stages.includes(name)) add(name, await check(CHECKS[name]));
-  }
+  const checks = Object.keys(CHECKS).filter((name) => stages.includes(name));
+  const outcomes = await Promise.all(checks.map((name) => check(CHECKS[name])));
+  checks.forEach((name, index) => add(name, outcomes[index]));
 
   let environment = { ...process.env, NODE_ENV: 'test' };
   if (needsServices && !given) {
