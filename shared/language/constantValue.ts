@@ -133,7 +133,8 @@ export function constantValue(
         if (!base || !exponent) return undefined;
         const size = Math.abs(Q.toNumber(exponent.value));
         if (!Q.isInteger(exponent.value) || size > LARGEST_POWER) {
-          findings.add('value-not-exact', part.span);
+          const isWhole = Q.isInteger(exponent.value);
+          findings.add(isWhole ? 'number-too-large' : 'value-not-exact', part.span);
           return undefined;
         }
         if (Q.isZero(base.value) && Q.sign(exponent.value) < 0) {

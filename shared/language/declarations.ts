@@ -49,7 +49,8 @@ export function collectDeclarations(tree: SourceTree, findings: Findings): Decla
   };
 
   const stated = once('ensemble', 'The ensemble');
-  if (!stated && !wasFaulty('ensemble')) {
+  const isUnread = statements.length === 0 && findings.errorCount > 0;
+  if (!stated && !wasFaulty('ensemble') && !isUnread) {
     const guess = guessedEnsemble(statements);
     findings.add('no-ensemble', { start: 0, end: 0 }, {}, [
       {

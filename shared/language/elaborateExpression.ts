@@ -359,7 +359,7 @@ export class ExpressionElaborator {
 
   private squareRoot(tree: CallTree): Typed | undefined {
     const [only] = tree.arguments;
-    if (!only || !this.hasCount(tree, 1, 'sqrt(x)')) return undefined;
+    if (!this.hasCount(tree, 1, 'sqrt(x)') || !only) return undefined;
     const of = this.finite(only);
     if (!of) return undefined;
     if (of.e.kind === 'number' && Q.sign(of.e.value) < 0) {
@@ -455,7 +455,7 @@ export class ExpressionElaborator {
     { values, dimension }: Extract<Entity, { kind: 'list' }>,
   ): Typed | undefined {
     const [only] = tree.arguments;
-    if (!only || !this.hasCount(tree, 1, `${tree.name.spelled}(i)`)) return undefined;
+    if (!this.hasCount(tree, 1, `${tree.name.spelled}(i)`) || !only) return undefined;
     const index = this.finite(only);
     if (!index || !this.isPure(index.d, only, 'The index of a list must be a number')) {
       return undefined;
