@@ -1,4 +1,5 @@
 /** A source text cut into the parts that are coloured differently. */
+import { tokensOf } from '../../shared/language/highlight.ts';
 
 export type SourceKind = 'plain' | 'keyword' | 'unit' | 'text' | 'comment';
 
@@ -7,19 +8,15 @@ export interface SourcePart {
   readonly text: string;
 }
 
-const PART =
-  /(#[^\n]*)|("[^"\n]*"?)|(\[[^\]\n]*\]?)|\b(ensemble|species|extent|field|response|constant|parameter|between|and|list|let|order|saddle|factorials|molar|report|claim|as|for|in|sum|product|integral|from|to|cases|otherwise)\b/g;
-
 /** The parts of the source in order; together they are the source again. */
 export function sourceParts(source: string): SourcePart[] {
   const parts: SourcePart[] = [];
   let end = 0;
-  for (const match of source.matchAll(PART)) {
-    const [text, comment, quoted, unit] = match;
-    if (match.index > end) parts.push({ kind: 'plain', text: source.slice(end, match.index) });
-    const kind = comment ? 'comment' : quoted ? 'text' : unit ? 'unit' : 'keyword';
-    parts.push({ kind, text });
-    end = match.index + text.length;
+  for (const { kind, span } of tokensOf(source)) {
+    if (kind === 'number' || kind === 'name' || kind === 'operator') continue;
+    if (span.start > end) parts.push({ kind: 'plain', text: source.slice(end, span.start) });
+    parts.push({ kind, text: source.slice(span.start, span.end) });
+    end = span.end;
   }
   if (end < source.length) parts.push({ kind: 'plain', text: source.slice(end) });
   return parts;
