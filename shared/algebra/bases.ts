@@ -45,6 +45,11 @@ export type Base = Kernel | PolynomialBase;
 /** A product that would multiply out to more terms than this is left as it stands. */
 export const MOST_EXPANDED_TERMS = 4000;
 
+/** A way of writing that is so much shorter than the plain one is not improved upon. */
+const SHORT_ENOUGH = 0.75;
+/** Larger polynomials are not tried against powers of known bases. */
+const MOST_TERMS_REWRITTEN = 24;
+
 export interface BasesOptions {
   readonly mode: 'display' | 'equality';
   /**
@@ -164,7 +169,11 @@ export class Bases {
     this.polynomialNumber.set(P.toKey(polynomial), index);
     if (this.options.mode === 'display') {
       this.offerWriting(index, hint);
-      for (const writing of this.writingsByBases(polynomial)) this.offerWriting(index, writing);
+      const plain = readingCost(expression);
+      const isShort = hint !== undefined && readingCost(hint) < SHORT_ENOUGH * plain;
+      if (!isShort) {
+        for (const writing of this.writingsByBases(polynomial)) this.offerWriting(index, writing);
+      }
     }
     return index;
   }
@@ -184,7 +193,7 @@ export class Bases {
    */
   private *writingsByBases(polynomial: Polynomial): Generator<Expression> {
     const size = P.termCount(polynomial);
-    if (size < 4 || size > 60) return;
+    if (size < 4 || size > MOST_TERMS_REWRITTEN) return;
     const variables = new Set(P.variablesOf(polynomial));
     for (const base of this.bases) {
       if (base.kind !== 'polynomial' || base.polynomial === polynomial) continue;
@@ -192,10 +201,8 @@ export class Bases {
       if (terms > 3 || !P.variablesOf(base.polynomial).every((v) => variables.has(v))) continue;
       for (let n = 4; n >= 1; n--) {
         const raised = P.power(base.polynomial, n);
-        const all = [...P.termsOf(raised)];
-        for (const pivot of [all[0], all[all.length - 1]]) {
-          if (!pivot) continue;
-          const quotient = divideTermwise(polynomial, pivot);
+        for (const pivot of ['highest', 'lowest'] as const) {
+          const quotient = P.divideTermwise(polynomial, raised, pivot);
           const taken = P.termCount(quotient);
           if (taken === 0 || taken > 3) continue;
           const rest = P.add(polynomial, P.negate(P.multiply(quotient, raised)));
@@ -299,29 +306,4 @@ export class Bases {
     }
     return sum(terms);
   }
-}
-
-/** Σ of those terms of p that the monomial divides exactly, each divided by it. */
-function divideTermwise(
-  p: Polynomial,
-  by: { coefficient: bigint; exponents: readonly (readonly [number, number])[] },
-): Polynomial {
-  let result = P.zero;
-  for (const { coefficient, exponents } of P.termsOf(p)) {
-    if (coefficient % by.coefficient !== 0n) continue;
-    const left = new Map(exponents);
-    let divides = true;
-    for (const [variable, exponent] of by.exponents) {
-      const remaining = (left.get(variable) ?? 0) - exponent;
-      if (remaining < 0) divides = false;
-      left.set(variable, remaining);
-    }
-    if (!divides) continue;
-    let term = P.constant(coefficient / by.coefficient);
-    for (const [variable, exponent] of left) {
-      term = P.multiply(term, P.power(P.variable(variable), exponent));
-    }
-    result = P.add(result, term);
-  }
-  return result;
 }

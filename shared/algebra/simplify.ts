@@ -12,6 +12,8 @@ import { Workspace } from './workspace.ts';
 
 /** Pairs of terms are tried against each other up to this many terms. */
 const MOST_PAIRED_TERMS = 14;
+/** A numerator of more terms than this is never shorter than the two terms that it comes from. */
+const MOST_TERMS_OF_PAIR = 10;
 
 export interface SimplifyOptions {
   /** Expressions met before (ln Q, say), whose sums later results are factored by. */
@@ -77,7 +79,7 @@ export class Simplifier {
         for (let j = i + 1; j < terms.length; j++) {
           const a = terms[i];
           const b = terms[j];
-          if (!a || !b || !areRelated(a.factored, b.factored)) continue;
+          if (!a || !b || !this.mayShorten(a.factored, b.factored)) continue;
           const factored = workspace.add([a.factored, b.factored]);
           const written = workspace.write(factored);
           const saving = pairCost(a.written, b.written) - readingCost(written);
@@ -90,18 +92,18 @@ export class Simplifier {
     }
     return shortest([asDerived, gatherLogarithms(sum(terms.map(({ written }) => written)))]);
   }
+
+  /** Terms that share nothing, or whose sum multiplies out to much, are not worth a trial. */
+  private mayShorten(a: Factored, b: Factored): boolean {
+    if (a.exponents.size === 0 || b.exponents.size === 0) return true;
+    const isRelated = [...a.exponents.keys()].some((base) => b.exponents.has(base));
+    return isRelated && this.workspace.sizeOfSum([a, b]) <= MOST_TERMS_OF_PAIR;
+  }
 }
 
 /** What two terms cost side by side, the sign between them included. */
 function pairCost(a: Expression, b: Expression): number {
   return readingCost(sum([a, b]));
-}
-
-/** Terms that share no base have nothing to be put together by. */
-function areRelated(a: Factored, b: Factored): boolean {
-  if (a.exponents.size === 0 || b.exponents.size === 0) return true;
-  for (const base of a.exponents.keys()) if (b.exponents.has(base)) return true;
-  return false;
 }
 
 function shortest(candidates: readonly Expression[]): Expression {

@@ -266,6 +266,15 @@ export class Workspace {
     return multiplyFactored(outside, this.addRemainders(remainders));
   }
 
+  /** How many terms the common numerator has before anything cancels. */
+  sizeOfSum(terms: readonly Factored[]): number {
+    const common = commonExponents(terms);
+    return terms.reduce(
+      (size, term) => size + this.bases.expandedSize(withoutExponents(term, common)),
+      0,
+    );
+  }
+
   /** The sum of terms without negative exponents and without a base common to all of them. */
   private addRemainders(terms: readonly Factored[]): Factored {
     let content = Q.ZERO;

@@ -6,6 +6,7 @@ export {
   degree,
   derivative,
   divideExact,
+  divideTermwise,
   equals,
   isConstant,
   isZero,

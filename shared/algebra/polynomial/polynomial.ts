@@ -299,3 +299,20 @@ export function substituteInteger(p: Polynomial, index: number, value: bigint): 
   spend(p.monomials.length);
   return fromMap(collected);
 }
+
+/** Σ of those terms of p that the highest (lowest) term of q divides, each divided by it. */
+export function divideTermwise(p: Polynomial, q: Polynomial, by: 'highest' | 'lowest'): Polynomial {
+  const at = by === 'highest' ? 0 : q.monomials.length - 1;
+  const divisor = q.monomials[at] ?? UNIT;
+  const number = q.coefficients[at] ?? 1;
+  const monomials: Monomial[] = [];
+  const coefficients: Coefficient[] = [];
+  p.monomials.forEach((m, i) => {
+    const coefficient = dividedExactly(p.coefficients[i] ?? 0, number);
+    const monomial = coefficient === undefined ? undefined : divideMonomials(m, divisor);
+    if (monomial === undefined || coefficient === undefined) return;
+    monomials.push(monomial);
+    coefficients.push(coefficient);
+  });
+  return { monomials, coefficients };
+}
