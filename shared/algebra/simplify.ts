@@ -15,6 +15,17 @@ const MOST_PAIRED_TERMS = 14;
 /** A numerator of more terms than this is never shorter than the two terms that it comes from. */
 const MOST_TERMS_OF_PAIR = 10;
 
+interface Term {
+  readonly factored: Factored;
+  readonly written: Expression;
+}
+
+interface Merger {
+  readonly term: Term;
+  /** Characters saved by writing one term in place of two. */
+  readonly saving: number;
+}
+
 export interface SimplifyOptions {
   /** Expressions met before (ln Q, say), whose sums later results are factored by. */
   readonly known?: readonly Expression[];
@@ -64,7 +75,7 @@ export class Simplifier {
     const { workspace } = this;
     const addends = addendsOf(sum(addendsOf(distribute(e)).map(distribute)));
     if (addends.length < 2) return undefined;
-    const terms: { factored: Factored; written: Expression }[] = [];
+    const terms: Term[] = [];
     for (const addend of addends) {
       const factored = workspace.factored(addend);
       if (Q.isZero(factored.coefficient)) continue;
@@ -72,25 +83,38 @@ export class Simplifier {
     }
     const asDerived = gatherLogarithms(sum(terms.map(({ written }) => written)));
     if (terms.length > MOST_PAIRED_TERMS) return asDerived;
+    // A pair is tried once: what it gives does not depend on the other terms.
+    const tried = new Map<Term, Map<Term, Merger | undefined>>();
+    const merge = (a: Term, b: Term): Merger | undefined => {
+      let known = tried.get(a);
+      if (!known) tried.set(a, (known = new Map()));
+      if (!known.has(b)) known.set(b, this.merge(a, b));
+      return known.get(b);
+    };
     for (;;) {
-      let best:
-        { i: number; j: number; merged: (typeof terms)[number]; saving: number } | undefined;
+      let best: { i: number; j: number; merger: Merger } | undefined;
       for (let i = 0; i < terms.length; i++) {
         for (let j = i + 1; j < terms.length; j++) {
           const a = terms[i];
           const b = terms[j];
-          if (!a || !b || !this.mayShorten(a.factored, b.factored)) continue;
-          const factored = workspace.add([a.factored, b.factored]);
-          const written = workspace.write(factored);
-          const saving = pairCost(a.written, b.written) - readingCost(written);
-          if (saving > (best?.saving ?? 0)) best = { i, j, merged: { factored, written }, saving };
+          const merger = a && b && merge(a, b);
+          if (merger && merger.saving > (best?.merger.saving ?? 0)) best = { i, j, merger };
         }
       }
       if (!best) break;
-      terms[best.i] = best.merged;
+      terms[best.i] = best.merger.term;
       terms.splice(best.j, 1);
     }
     return shortest([asDerived, gatherLogarithms(sum(terms.map(({ written }) => written)))]);
+  }
+
+  /** Two terms as one, and what that saves; undefined where it is not worth a trial. */
+  private merge(a: Term, b: Term): Merger | undefined {
+    if (!this.mayShorten(a.factored, b.factored)) return undefined;
+    const factored = this.workspace.add([a.factored, b.factored]);
+    const written = this.workspace.write(factored);
+    const saving = readingCost(sum([a.written, b.written])) - readingCost(written);
+    return { term: { factored, written }, saving };
   }
 
   /** Terms that share nothing, or whose sum multiplies out to much, are not worth a trial. */
@@ -99,11 +123,6 @@ export class Simplifier {
     const isRelated = [...a.exponents.keys()].some((base) => b.exponents.has(base));
     return isRelated && this.workspace.sizeOfSum([a, b]) <= MOST_TERMS_OF_PAIR;
   }
-}
-
-/** What two terms cost side by side, the sign between them included. */
-function pairCost(a: Expression, b: Expression): number {
-  return readingCost(sum([a, b]));
 }
 
 function shortest(candidates: readonly Expression[]): Expression {
