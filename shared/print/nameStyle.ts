@@ -49,6 +49,7 @@ const LETTERS: Readonly<Record<string, string>> = {
   vartheta: '\\vartheta',
   phi: '\\varphi',
   hbar: '\\hbar',
+  ell: '\\ell',
 };
 
 /** Whole names with a typography of their own, after ISO 80000 and IUPAC's Green Book. */
@@ -74,6 +75,9 @@ const QUANTITIES: ReadonlySet<string> = new Set([
   'n',
   'H',
   'U',
+  'M',
+  'L',
+  'B',
 ]);
 
 function stripped(text: string): string {
@@ -85,28 +89,35 @@ function letterTex(text: string): string | undefined {
   return GREEK.has(text) ? `\\${text}` : undefined;
 }
 
+/** Text of a name that is no letter of its own: upright, and never empty, so that TeX has a base. */
+function uprightTex(clean: string): string {
+  return `\\mathrm{${clean === '' ? '?' : clean}}`;
+}
+
 function headTex(head: string): string {
   const letter = letterTex(head);
   if (letter) return letter;
   const clean = stripped(head);
-  return clean.length <= 1 ? clean : `\\mathrm{${clean}}`;
+  return clean.length === 1 ? clean : uprightTex(clean);
 }
 
 function subscriptTex(subscript: string): string {
   const letter = letterTex(subscript);
   if (letter) return letter;
   const clean = stripped(subscript);
-  return QUANTITIES.has(clean) || /^\d+$/.test(clean) ? clean : `\\mathrm{${clean}}`;
+  return QUANTITIES.has(clean) || /^\d+$/.test(clean) ? clean : uprightTex(clean);
 }
 
 /** The typography of a name by itself: `Theta_E` is Θ with an upright E below. */
 export function texOfName(name: string): string {
   if (Object.hasOwn(NAMES, name)) return NAMES[name] ?? '';
-  // `q` with digits behind it, as in B2, is the letter with a numeral below.
-  const numbered = /^([A-Za-z])(\d+)$/.exec(name);
-  if (numbered) return `${numbered[1]}_{${numbered[2]}}`;
-  const [head = '', ...subscripts] = name.split('_');
+  const [whole = '', ...subscripts] = name.split('_');
+  // A letter with digits behind it, as in B2 and x1, is the letter with a numeral below.
+  const [, letter, numeral] = /^([A-Za-z]+?)(\d+)$/.exec(whole) ?? [];
+  const isNumbered = letter !== undefined && (letter.length === 1 || letterTex(letter));
+  const head = isNumbered ? letter : whole;
   const below = subscripts.filter((part) => part !== '').map(subscriptTex);
+  if (isNumbered && numeral !== undefined) below.unshift(numeral);
   return below.length === 0 ? headTex(head) : `${headTex(head)}_{${below.join(',')}}`;
 }
 
@@ -120,8 +131,13 @@ const DEFAULT_ORDER = ['N', 'k', 'T', 'V'];
 export function nameStyle(nameOrder: readonly string[] = []): NameStyle {
   const ranks = new Map(nameOrder.map((name, i) => [name, i + 1]));
   const behind = nameOrder.length + 1;
+  const written = new Map<string, string>();
   return {
-    texOf: texOfName,
+    texOf(name) {
+      let tex = written.get(name);
+      if (tex === undefined) written.set(name, (tex = texOfName(name)));
+      return tex;
+    },
     rankOf(name) {
       const rank = ranks.get(name);
       if (rank !== undefined) return rank;

@@ -1,8 +1,11 @@
 /** Expressions in TeX, as a careful author would set them. */
 import type { Expression, FunctionName, Relation } from '../algebra/expression.ts';
 import * as Q from '../algebra/rational.ts';
-import { arrange, arrangeRelation, type Arranged } from './arrange.ts';
+import { arrange, arrangeRelation } from './arrange.ts';
+import { isOpenEnded, isShort, type Arranged } from './arranged.ts';
 import type { NameStyle } from './nameStyle.ts';
+import { asDecimal } from './numerals.ts';
+import { fitsOnLine, isBareArgument, isRaised, levels, nesting } from './texShape.ts';
 
 /** `\frac{N k T}{V - N b} - \frac{a N^{2}}{V^{2}}` */
 export function toTex(e: Expression, style: NameStyle): string {
@@ -24,9 +27,11 @@ const RELATIONS: Readonly<Record<Relation['sign'], string>> = {
   '>': '>',
 };
 
-/** Functions that TeX has a command for; the others are set upright. */
-const COMMANDS: Partial<Record<FunctionName, string>> = {
+/** Signs of functions after ISO 80000-2; functions with subscripts or bars are set by `call`. */
+const SIGNS: Partial<Record<FunctionName, string>> = {
+  exp: '\\exp',
   ln: '\\ln',
+  log10: '\\log_{10}',
   sinh: '\\sinh',
   cosh: '\\cosh',
   tanh: '\\tanh',
@@ -34,17 +39,34 @@ const COMMANDS: Partial<Record<FunctionName, string>> = {
   sin: '\\sin',
   cos: '\\cos',
   tan: '\\tan',
+  arcsinh: '\\operatorname{arsinh}',
+  arctanh: '\\operatorname{artanh}',
+  erf: '\\operatorname{erf}',
+  heaviside: '\\operatorname{H}',
+  Gamma: '\\Gamma',
+  lnGamma: '\\ln\\Gamma',
+  digamma: '\\psi',
   min: '\\min',
   max: '\\max',
-  exp: '\\exp',
-  Gamma: '\\Gamma',
-  digamma: '\\psi',
-  lnGamma: '\\ln\\Gamma',
-  log10: '\\log_{10}',
 };
 
-/** An exponent that is longer than this is set as exp(…). */
-const LONGEST_EXPONENT = 60;
+/** Functions whose powers are written at their sign: sinh² x. */
+const RAISED_AT_SIGN: ReadonlySet<string> = new Set([
+  'sinh',
+  'cosh',
+  'tanh',
+  'coth',
+  'sin',
+  'cos',
+  'tan',
+]);
+
+/** Delimiters from inside out. */
+const DELIMITERS = [
+  ['(', ')'],
+  ['[', ']'],
+  ['\\{', '\\}'],
+] as const;
 
 class TexPrinter {
   private readonly style: NameStyle;
@@ -62,15 +84,9 @@ class TexPrinter {
       case 'infinity':
         return '\\infty';
       case 'negative':
-        return `-${a.inside.kind === 'sum' ? this.delimited(a.inside) : this.tex(a.inside)}`;
+        return `-${this.term(a.inside, true)}`;
       case 'sum':
-        return a.terms
-          .map(({ minus, term }, i) => {
-            const sign = i === 0 ? (minus ? '-' : '') : minus ? ' - ' : ' + ';
-            const needs = term.kind === 'sum' || term.kind === 'negative';
-            return sign + (needs ? this.delimited(term) : this.tex(term));
-          })
-          .join('');
+        return this.sum(a);
       case 'product':
         return this.product(a.factors);
       case 'fraction':
@@ -85,64 +101,75 @@ class TexPrinter {
       case 'productOver': {
         const sign = a.kind === 'summation' ? '\\sum' : '\\prod';
         const from = `${this.style.texOf(a.variable)}=${this.tex(a.from)}`;
-        return `${sign}_{${from}}^{${this.tex(a.to)}} ${this.factor(a.body)}`;
+        return `${sign}_{${from}}^{${this.tex(a.to)}} ${this.factor(a.body, true)}`;
       }
       case 'integral': {
         const variable = this.style.texOf(a.variable);
-        return `\\int_{${this.tex(a.from)}}^{${this.tex(a.to)}} ${this.factor(a.body)} \\,\\mathrm{d}${variable}`;
+        const body = this.factor(a.body, true);
+        return `\\int_{${this.tex(a.from)}}^{${this.tex(a.to)}} ${body} \\,\\mathrm{d}${variable}`;
       }
       case 'cases': {
         const rows = a.branches.map(
-          ({ condition, value }) =>
-            `${this.tex(value)} & ${this.tex(condition.left)} ${RELATIONS[condition.sign]} ${this.tex(condition.right)}`,
+          ({ condition: { left, sign, right }, value }) =>
+            `${this.tex(value)} & ${this.tex(left)} ${RELATIONS[sign]} ${this.tex(right)}`,
         );
-        return `\\begin{cases} ${[...rows, `${this.tex(a.otherwise)} & \\text{otherwise}`].join(' \\\\ ')} \\end{cases}`;
+        rows.push(`${this.tex(a.otherwise)} & \\text{otherwise}`);
+        return `\\begin{cases} ${rows.join(' \\\\ ')} \\end{cases}`;
       }
       case 'element':
-        return `${this.style.texOf(a.list)}_{${this.tex(a.index)}}`;
+        return this.element(a);
     }
+  }
+
+  private sum({ terms }: Extract<Arranged, { kind: 'sum' }>): string {
+    return terms
+      .map(({ minus, term }, i) => {
+        const sign = i === 0 ? (minus ? '-' : '') : minus ? ' - ' : ' + ';
+        return sign + this.term(term, i === terms.length - 1);
+      })
+      .join('');
+  }
+
+  private term(a: Arranged, isLast: boolean): string {
+    const needs = a.kind === 'sum' || a.kind === 'negative' || (!isLast && isOpenEnded(a));
+    return needs ? this.delimited(a) : this.tex(a);
   }
 
   private product(factors: readonly Arranged[]): string {
     return factors
       .map((factor, i) => {
-        const text = this.factor(factor);
-        const previous = factors[i - 1];
+        const text = this.factor(factor, i === factors.length - 1);
         // Two numbers side by side would read as one.
-        return previous && factor.kind === 'number' ? `\\cdot ${text}` : text;
+        return i > 0 && /^(?:\d|\\tfrac)/.test(text) ? `\\cdot ${text}` : text;
       })
       .join(' ');
   }
 
-  private factor(a: Arranged): string {
-    return a.kind === 'sum' || a.kind === 'negative' ? this.delimited(a) : this.tex(a);
+  private factor(a: Arranged, isLast: boolean): string {
+    const needs =
+      a.kind === 'sum' ||
+      a.kind === 'negative' ||
+      (!isLast && (isOpenEnded(a) || a.kind === 'cases'));
+    return needs ? this.delimited(a) : this.tex(a);
   }
 
   private power(base: Arranged, exponent: Arranged): string {
-    const raised = `^{${this.inExponent(exponent)}}`;
-    if (base.kind === 'call' && base.arguments.length === 1 && base.name !== 'exp') {
-      const command = COMMANDS[base.name];
-      if (command && base.name !== 'ln' && base.name !== 'Gamma' && base.name !== 'log10') {
-        return `${command}${raised}${this.argument(base.arguments[0])}`;
-      }
-      return this.delimited(base) + raised;
+    const raised = `^{${this.onLine(exponent) ?? this.tex(exponent)}}`;
+    if (base.kind === 'call' && RAISED_AT_SIGN.has(base.name) && isShort(exponent)) {
+      const [x] = base.arguments;
+      return `${SIGNS[base.name] ?? ''}${raised}${x ? this.argument(base.name, x) : ''}`;
     }
-    const isSimple =
-      base.kind === 'name' ||
-      base.kind === 'element' ||
-      (base.kind === 'number' && Q.isInteger(base.value));
-    return (isSimple ? this.tex(base) : this.delimited(base)) + raised;
+    return (isShort(base) && !asPowerOfTen(base) ? this.tex(base) : this.delimited(base)) + raised;
   }
 
   private call(a: Extract<Arranged, { kind: 'call' }>): string {
-    const [x, second] = a.arguments;
+    const [x, second, ...held] = a.arguments;
     if (!x) return '';
+    const at = second ? this.delimited(second) : '';
     switch (a.name) {
       case 'exp': {
-        const exponent = this.inExponent(x);
-        return exponent.length <= LONGEST_EXPONENT && levels(x) <= 2
-          ? `\\mathrm{e}^{${exponent}}`
-          : `\\exp${this.delimited(x)}`;
+        const exponent = isRaised(a) ? this.onLine(x) : undefined;
+        return exponent === undefined ? `\\exp${this.delimited(x)}` : `\\mathrm{e}^{${exponent}}`;
       }
       case 'factorial':
         return `${isShort(x) ? this.tex(x) : this.delimited(x)}!`;
@@ -151,132 +178,90 @@ class TexPrinter {
       case 'binomial':
         return `\\binom{${this.tex(x)}}{${second ? this.tex(second) : ''}}`;
       case 'polygamma':
-        return `\\psi^{(${this.tex(x)})}${second ? this.delimited(second) : ''}`;
+        return `\\psi^{(${this.tex(x)})}${at}`;
       case 'polylog':
-        return `\\mathrm{Li}_{${this.tex(x)}}${second ? this.delimited(second) : ''}`;
+        return `\\mathrm{Li}_{${this.onLine(x) ?? this.tex(x)}}${at}`;
       case 'besselI':
-        return `I_{${this.tex(x)}}${second ? this.delimited(second) : ''}`;
+        return `I_{${this.onLine(x) ?? this.tex(x)}}${at}`;
       case 'debye':
-        return `D_{${this.tex(x)}}${second ? this.delimited(second) : ''}`;
+        return `D_{${this.tex(x)}}${at}`;
       case 'partial': {
-        const [, , ...fixed] = a.arguments;
-        const constant = fixed.map((z) => this.tex(z)).join(',');
-        return `\\left(\\frac{\\partial ${this.factor(x)}}{\\partial ${second ? this.factor(second) : ''}}\\right)_{${constant}}`;
+        const constant = held.map((z) => this.tex(z)).join(',');
+        const quotient = `\\frac{\\partial ${this.factor(x, true)}}{\\partial ${second ? this.factor(second, true) : ''}}`;
+        return `\\left(${quotient}\\right)_{${constant}}`;
       }
       default: {
-        const command = COMMANDS[a.name] ?? `\\operatorname{${a.name}}`;
-        if (a.arguments.length === 1) return command + this.argument(x);
+        const sign = SIGNS[a.name] ?? `\\operatorname{${a.name}}`;
+        if (a.arguments.length === 1) return sign + this.argument(a.name, x);
         const inside = a.arguments.map((argument) => this.tex(argument)).join(', ');
-        return `${command}\\left(${inside}\\right)`;
+        return sign + this.enclosed(inside, { kind: 'product', factors: a.arguments });
       }
     }
   }
 
   /** ln V and ln (V/N) as a fraction without parentheses; anything else within them. */
-  private argument(x: Arranged | undefined): string {
-    if (!x) return '';
-    if (isShort(x)) return ` ${this.tex(x)}`;
-    return x.kind === 'fraction' ? this.tex(x) : this.delimited(x);
+  private argument(name: FunctionName, x: Arranged): string {
+    if (!isBareArgument(name, x)) return this.delimited(x);
+    return x.kind === 'fraction' ? this.tex(x) : ` ${this.tex(x)}`;
   }
 
-  /** A fraction in an exponent is set with a slash, where its parts are simple. */
-  private inExponent(a: Arranged): string {
-    if (a.kind === 'negative') return `-${this.inExponent(a.inside)}`;
-    if (a.kind === 'number' && !Q.isInteger(a.value)) {
-      return `${a.value.numerator}/${a.value.denominator}`;
+  /** A fraction in an exponent is set with a slash, where its parts are flat. */
+  private onLine(a: Arranged): string | undefined {
+    if (!fitsOnLine(a)) return undefined;
+    switch (a.kind) {
+      case 'negative': {
+        const inside = this.onLine(a.inside) ?? '';
+        return a.inside.kind === 'sum' ? `-(${inside})` : `-${inside}`;
+      }
+      case 'number':
+        return Q.isInteger(a.value) || asDecimal(a.value) ? numberTex(a.value) : Q.toText(a.value);
+      case 'sum':
+        return a.terms
+          .map(({ minus, term }, i) => {
+            const sign = i === 0 ? (minus ? '-' : '') : minus ? ' - ' : ' + ';
+            return sign + (this.onLine(term) ?? '');
+          })
+          .join('');
+      case 'fraction': {
+        const isUnit = isShort(a.below) || (a.below.kind === 'power' && isShort(a.below.base));
+        const above = this.tex(a.above);
+        const below = this.tex(a.below);
+        return `${a.above.kind === 'sum' ? `(${above})` : above}/${isUnit ? below : `(${below})`}`;
+      }
+      default:
+        return this.tex(a);
     }
-    if (a.kind !== 'fraction') return this.tex(a);
-    const above = levels(a.above) === 0 && a.above.kind !== 'sum' ? this.tex(a.above) : undefined;
-    const below = levels(a.below) === 0 ? this.tex(a.below) : undefined;
-    if (above === undefined || below === undefined) return this.tex(a);
-    const isGrouped = a.below.kind === 'product' || a.below.kind === 'sum';
-    return `${above}/${isGrouped ? `(${below})` : below}`;
   }
 
-  /** Round, square and curly delimiters by depth; as tall as what they hold. */
+  /** E_{v,i}: TeX takes one subscript only. */
+  private element({ list, index }: Extract<Arranged, { kind: 'element' }>): string {
+    const at = this.onLine(index) ?? this.tex(index);
+    const name = this.style.texOf(list);
+    const subscripted = /^(.*)_\{(.*)\}$/.exec(name);
+    return subscripted ? `${subscripted[1]}_{${subscripted[2]},${at}}` : `${name}_{${at}}`;
+  }
+
   private delimited(a: Arranged): string {
-    const depth = nesting(a) % 3;
-    const [open, close] = (
-      [
-        ['(', ')'],
-        ['[', ']'],
-        ['\\{', '\\}'],
-      ] as const
-    )[depth] ?? ['(', ')'];
-    const inside = this.tex(a);
+    return this.enclosed(this.tex(a), a);
+  }
+
+  /** Round, square and curly delimiters from inside out; as tall as what they hold. */
+  private enclosed(inside: string, a: Arranged): string {
+    const [open, close] = DELIMITERS[nesting(a) % DELIMITERS.length] ?? DELIMITERS[0];
     return levels(a) === 0 ? `${open}${inside}${close}` : `\\left${open}${inside}\\right${close}`;
   }
 }
 
+function asPowerOfTen(a: Arranged): boolean {
+  return a.kind === 'number' && asDecimal(a.value) !== undefined;
+}
+
 function numberTex(r: Q.Rational): string {
+  const decimal = asDecimal(r);
+  if (decimal) {
+    const { mantissa, exponent } = decimal;
+    if (exponent === 0) return mantissa;
+    return mantissa === '1' ? `10^{${exponent}}` : `${mantissa} \\times 10^{${exponent}}`;
+  }
   return Q.isInteger(r) ? String(r.numerator) : `\\tfrac{${r.numerator}}{${r.denominator}}`;
-}
-
-function isShort(a: Arranged): boolean {
-  return a.kind === 'name' || a.kind === 'element' || (a.kind === 'number' && Q.isInteger(a.value));
-}
-
-function partsOf(a: Arranged): readonly Arranged[] {
-  switch (a.kind) {
-    case 'number':
-    case 'name':
-    case 'infinity':
-      return [];
-    case 'negative':
-    case 'root':
-      return [a.inside];
-    case 'sum':
-      return a.terms.map(({ term }) => term);
-    case 'product':
-      return a.factors;
-    case 'fraction':
-      return [a.above, a.below];
-    case 'power':
-      return [a.base];
-    case 'call':
-      return a.name === 'exp' ? [] : a.arguments;
-    case 'summation':
-    case 'productOver':
-    case 'integral':
-      return [a.body];
-    case 'cases':
-      return [...a.branches.map(({ value }) => value), a.otherwise];
-    case 'element':
-      return [a.index];
-  }
-}
-
-/** How many fraction bars and big signs stand above each other: 0 for a flat line. */
-function levels(a: Arranged): number {
-  const inner = Math.max(0, ...partsOf(a).map(levels));
-  switch (a.kind) {
-    case 'fraction':
-    case 'summation':
-    case 'productOver':
-    case 'integral':
-    case 'cases':
-      return inner + 1;
-    case 'number':
-      return Q.isInteger(a.value) ? 0 : 1;
-    default:
-      return inner;
-  }
-}
-
-/** How many pairs of delimiters will stand inside. */
-function nesting(a: Arranged): number {
-  const inner = Math.max(0, ...partsOf(a).map(nesting));
-  switch (a.kind) {
-    case 'product':
-      return Math.max(inner, ...a.factors.map((f) => (f.kind === 'sum' ? nesting(f) + 1 : 0)));
-    case 'power':
-      return a.base.kind === 'sum' || a.base.kind === 'fraction' ? inner + 1 : inner;
-    case 'call': {
-      const [x] = a.arguments;
-      const isBare = a.name === 'exp' || (x !== undefined && (isShort(x) || x.kind === 'fraction'));
-      return isBare ? inner : inner + 1;
-    }
-    default:
-      return inner;
-  }
 }

@@ -1,11 +1,14 @@
 /**
  * Expressions in the notation of the language: what is printed here is read back by the parser as
- * the same expression. After a division nothing follows without parentheses.
+ * the same expression. After a division nothing follows without parentheses. The one exception is
+ * the polygamma function, which the core writes but the language does not know.
  */
 import type { Expression, Relation } from '../algebra/expression.ts';
 import * as Q from '../algebra/rational.ts';
-import { arrange, arrangeRelation, type Arranged } from './arrange.ts';
+import { arrange, arrangeRelation } from './arrange.ts';
+import { isShort, type Arranged } from './arranged.ts';
 import type { NameStyle } from './nameStyle.ts';
+import { asDecimal } from './numerals.ts';
 
 /** `N k T/(V - N b) - a N^2/V^2` */
 export function toText(e: Expression, style: NameStyle): string {
@@ -18,47 +21,43 @@ export function relationToText(relation: Relation, style: NameStyle): string {
   return `${textOf(left)} ${sign} ${textOf(right)}`;
 }
 
+const WORDS = { summation: 'sum', productOver: 'product', integral: 'integral' } as const;
+
 function textOf(a: Arranged): string {
   switch (a.kind) {
     case 'number':
-      return Q.toText(a.value);
+      return numberText(a.value);
     case 'name':
       return a.name;
     case 'infinity':
       return 'inf';
     case 'negative':
-      return `-${a.inside.kind === 'sum' ? parenthesized(a.inside) : textOf(a.inside)}`;
+      return `-${termText(a.inside)}`;
     case 'sum':
       return a.terms
         .map(({ minus, term }, i) => {
           const sign = i === 0 ? (minus ? '-' : '') : minus ? ' - ' : ' + ';
-          return (
-            sign +
-            (term.kind === 'sum' || term.kind === 'negative' ? parenthesized(term) : textOf(term))
-          );
+          return sign + termText(term);
         })
         .join('');
     case 'product':
-      return a.factors.map((factor, i) => factorText(factor, i)).join(' ');
+      return a.factors.map(factorText).join(' ');
     case 'fraction':
-      return `${aboveText(a.above)}/${belowText(a.below)}`;
+      return `${aboveText(a.above)}/${operandText(a.below)}`;
     case 'power':
       return `${isAtom(a.base) ? textOf(a.base) : parenthesized(a.base)}^${exponentText(a.exponent)}`;
     case 'root':
       return `sqrt(${textOf(a.inside)})`;
     case 'call':
-      return `${a.name}(${a.arguments.map(textOf).join(a.name === 'partial' ? ', ' : ', ')})`;
+      return callText(a);
     case 'summation':
     case 'productOver':
-    case 'integral': {
-      const word =
-        a.kind === 'summation' ? 'sum' : a.kind === 'productOver' ? 'product' : 'integral';
-      return `${word} ${a.variable} from ${textOf(a.from)} to ${textOf(a.to)} { ${textOf(a.body)} }`;
-    }
+    case 'integral':
+      return `${WORDS[a.kind]} ${a.variable} from ${textOf(a.from)} to ${textOf(a.to)} { ${textOf(a.body)} }`;
     case 'cases': {
       const branches = a.branches.map(
-        ({ condition, value }) =>
-          `${textOf(condition.left)} ${condition.sign} ${textOf(condition.right)}: ${textOf(value)}`,
+        ({ condition: { left, sign, right }, value }) =>
+          `${textOf(left)} ${sign} ${textOf(right)}: ${textOf(value)}`,
       );
       return `cases { ${[...branches, `otherwise: ${textOf(a.otherwise)}`].join('; ')} }`;
     }
@@ -67,39 +66,54 @@ function textOf(a: Arranged): string {
   }
 }
 
+function numberText(value: Q.Rational): string {
+  const decimal = asDecimal(value);
+  if (!decimal) return Q.toText(value);
+  return decimal.exponent === 0 ? decimal.mantissa : `${decimal.mantissa}e${decimal.exponent}`;
+}
+
+function callText(a: Extract<Arranged, { kind: 'call' }>): string {
+  const [x, y, ...held] = a.arguments;
+  if (a.name === 'factorial' && x) return `${isAtom(x) ? textOf(x) : parenthesized(x)}!`;
+  if (a.name === 'partial' && x && y && held.length > 0) {
+    return `partial(${textOf(x)}, ${textOf(y)}; ${held.map(textOf).join(', ')})`;
+  }
+  return `${a.name}(${a.arguments.map(textOf).join(', ')})`;
+}
+
 function parenthesized(a: Arranged): string {
   return `(${textOf(a)})`;
 }
 
-/** What may be raised to a power or stand below a bar without parentheses. */
+function isFactorial(a: Arranged): boolean {
+  return a.kind === 'call' && a.name === 'factorial';
+}
+
+/** What is one word to the parser: it may be raised to a power or stand below a bar as it is. */
 function isAtom(a: Arranged): boolean {
-  return (
-    a.kind === 'name' ||
-    a.kind === 'call' ||
-    a.kind === 'root' ||
-    a.kind === 'element' ||
-    a.kind === 'infinity' ||
-    (a.kind === 'number' && Q.isInteger(a.value))
-  );
+  if (a.kind === 'number') return Q.isInteger(a.value) || asDecimal(a.value) !== undefined;
+  return isShort(a) || a.kind === 'root' || (a.kind === 'call' && !isFactorial(a));
+}
+
+function termText(a: Arranged): string {
+  return a.kind === 'sum' || a.kind === 'negative' ? parenthesized(a) : textOf(a);
+}
+
+function operandText(a: Arranged): string {
+  return isAtom(a) || isFactorial(a) || a.kind === 'power' ? textOf(a) : parenthesized(a);
 }
 
 function factorText(a: Arranged, index: number): string {
   // A quotient of plain numbers may be followed by a product, but only in front.
-  if (a.kind === 'number') return index === 0 ? Q.toText(a.value) : parenthesized(a);
-  return isAtom(a) || a.kind === 'power' ? textOf(a) : parenthesized(a);
+  if (a.kind === 'number') return index === 0 ? textOf(a) : parenthesized(a);
+  const text = operandText(a);
+  return index > 0 && /^\d/.test(text) ? `* ${text}` : text;
 }
 
 function aboveText(a: Arranged): string {
-  if (a.kind === 'product') return textOf(a);
-  return isAtom(a) || a.kind === 'power' ? textOf(a) : parenthesized(a);
-}
-
-function belowText(a: Arranged): string {
-  return isAtom(a) || a.kind === 'power' ? textOf(a) : parenthesized(a);
+  return a.kind === 'product' ? textOf(a) : operandText(a);
 }
 
 function exponentText(a: Arranged): string {
-  return a.kind === 'name' || (a.kind === 'number' && Q.isInteger(a.value))
-    ? textOf(a)
-    : parenthesized(a);
+  return a.kind === 'name' || (a.kind === 'number' && isAtom(a)) ? textOf(a) : parenthesized(a);
 }

@@ -32,7 +32,7 @@ const formulas: [string, Expression, string, string][] = [
       C.add(C.fraction(5, 2), C.ln(C.divide(free, C.multiply(N, C.power(Lambda, C.integer(3)))))),
     ]),
     'N k (5/2 + ln((V - N b)/(N Lambda^3)))',
-    'N k \\left(\\tfrac{5}{2} + \\ln\\frac{V - N b}{N \\Lambda^{3}}\\right)',
+    'N k \\left[\\tfrac{5}{2} + \\ln\\frac{V - N b}{N \\Lambda^{3}}\\right]',
   ],
   [
     'one root for several factors',
@@ -52,6 +52,116 @@ const formulas: [string, Expression, string, string][] = [
   ['ascending powers', C.sum([C.one, C.negate(x), C.square(x)]), '1 - x + x^2', '1 - x + x^{2}'],
   ['a leading plus where there is one', C.subtract(x, C.one), 'x - 1', 'x - 1'],
 ];
+
+const J = C.symbol('J', { integer: true });
+const rotor = C.summation(
+  J,
+  C.zero,
+  C.infinity,
+  C.product([
+    C.add(C.multiply(C.two, J), C.one),
+    C.exp(C.negate(C.divide(C.product([J, C.add(J, C.one), C.symbol('Theta_r')]), T))),
+  ]),
+);
+const thermal = C.product([C.two, C.pi, C.symbol('m', { positive: true }), k, T]);
+const list = [1n, 2n].map((numerator) => ({ numerator, denominator: 1n }));
+
+formulas.push(
+  [
+    'a common power of three halves',
+    C.multiply(
+      V,
+      C.power(C.divide(thermal, C.square(C.symbol('h', { positive: true }))), C.fraction(3, 2)),
+    ),
+    'V (2 pi m k T)^(3/2)/h^3',
+    '\\frac{V (2 \\pi m k T)^{3/2}}{h^{3}}',
+  ],
+  [
+    'one root over a fraction',
+    C.sqrt(
+      C.divide(
+        C.product([C.integer(5), k, T]),
+        C.multiply(C.integer(3), C.symbol('m', { positive: true })),
+      ),
+    ),
+    'sqrt(5 k T/(3 m))',
+    '\\sqrt{\\frac{5 k T}{3 m}}',
+  ],
+  [
+    'a quotient to a power that is a name',
+    C.product([C.integer(4), C.power(C.divide(x, V), C.symbol('n'))]),
+    '4 (x/V)^n',
+    '4 \\left(\\frac{x}{V}\\right)^{n}',
+  ],
+  [
+    'an index by descending powers and beside its own sums',
+    rotor,
+    'sum J from 0 to inf { (2 J + 1) exp(-Theta_r J (J + 1)/T) }',
+    '\\sum_{J=0}^{\\infty} (2 J + 1) \\mathrm{e}^{-\\Theta_{\\mathrm{r}} J (J + 1)/T}',
+  ],
+  [
+    'a tall exponent on the line',
+    C.exp(C.negate(C.divide(C.add(C.divide(a, V), x), C.multiply(k, T)))),
+    'exp(-(x + a/V)/(k T))',
+    '\\exp\\left(-\\frac{x + \\frac{a}{V}}{k T}\\right)',
+  ],
+  [
+    'a sum that is not the last term within parentheses, so that it ends',
+    C.add(rotor, C.ln(x)),
+    'ln(x) + sum J from 0 to inf { (2 J + 1) exp(-Theta_r J (J + 1)/T) }',
+    '\\ln x + \\sum_{J=0}^{\\infty} (2 J + 1) \\mathrm{e}^{-\\Theta_{\\mathrm{r}} J (J + 1)/T}',
+  ],
+  [
+    'an element of a list whose name has a subscript',
+    C.element('E_v', list, J),
+    'E_v(J)',
+    'E_{\\mathrm{v},J}',
+  ],
+  [
+    'a measured value as a decimal',
+    C.multiply(C.fraction(1380649n, 10n ** 29n), T),
+    '1.380649e-23 T',
+    '1.380649 \\times 10^{-23} T',
+  ],
+  [
+    'factorials',
+    C.divide(C.call('factorial', [N]), C.square(C.call('factorial', [C.subtract(N, C.one)]))),
+    'N!/((N - 1)!)^2',
+    '\\frac{N!}{[(N - 1)!]^{2}}',
+  ],
+  [
+    'equal names by ascending powers',
+    C.sum([
+      C.multiply(C.square(x), V),
+      C.multiply(x, V),
+      C.negate(C.multiply(C.power(x, C.integer(3)), V)),
+    ]),
+    'x V + x^2 V - x^3 V',
+    'x V + x^{2} V - x^{3} V',
+  ],
+  ['√3/2', C.sqrt(C.fraction(3, 4)), 'sqrt(3)/2', '\\frac{\\sqrt{3}}{2}'],
+);
+
+const names: [string, string][] = [
+  ['theta', '\\theta'],
+  ['eps', '\\varepsilon'],
+  ['hbar', '\\hbar'],
+  ['C_V', 'C_{V}'],
+  ['kappa_T', '\\kappa_{T}'],
+  ['mu_JT', '\\mu_{\\mathrm{JT}}'],
+  ['N_Av', 'N_{\\mathrm{A}}'],
+  ['Theta_E', '\\Theta_{\\mathrm{E}}'],
+  ['x_w', 'x_{\\mathrm{w}}'],
+  ['B2', 'B_{2}'],
+  ['alpha1', '\\alpha_{1}'],
+  ['volume', '\\mathrm{volume}'],
+];
+
+describe('the typography of names', () => {
+  it.each(names)('%s', (name, tex) => {
+    expect(style.texOf(name)).toBe(tex);
+  });
+});
 
 describe('printing', () => {
   it.each(formulas)('writes %s', (_, e, text, tex) => {
