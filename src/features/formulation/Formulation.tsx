@@ -91,7 +91,12 @@ function Desk({ draft }: { readonly draft: Draft }) {
             onSettle={(settled) => keeper.settle(settled)}
           />
         )}
-        <FormulationEditor source={text} diagnostics={diagnostics} onChange={edit} />
+        <FormulationEditor
+          source={text}
+          diagnostics={diagnostics}
+          isReadOnly={!model.mayEdit}
+          onChange={edit}
+        />
         {live.derivation && (
           <ParameterTable
             quantities={live.derivation.quantities}

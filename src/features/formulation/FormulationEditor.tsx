@@ -12,6 +12,8 @@ const RichEditor = lazy(() => import('./RichEditor.tsx'));
 export interface FormulationEditorProps {
   readonly source: string;
   readonly diagnostics: readonly Diagnostic[];
+  /** Readers see the text and its faults, and cannot type. */
+  readonly isReadOnly: boolean;
   readonly onChange: (source: string) => void;
 }
 

@@ -45,7 +45,12 @@ const OPTIONS: Monaco.editor.IStandaloneEditorConstructionOptions = {
 
 const FEWEST_LINES = 8;
 
-export default function RichEditor({ source, diagnostics, onChange }: FormulationEditorProps) {
+export default function RichEditor({
+  source,
+  diagnostics,
+  isReadOnly,
+  onChange,
+}: FormulationEditorProps) {
   const editor = useRef<Monaco.editor.IStandaloneCodeEditor>(null);
   const zones = useRef<FaultZones>(null);
   const [height, setHeight] = useState(FEWEST_LINES * 28);
@@ -77,7 +82,7 @@ export default function RichEditor({ source, diagnostics, onChange }: Formulatio
         theme={EDITOR_THEME}
         value={source}
         loading={null}
-        options={OPTIONS}
+        options={{ ...OPTIONS, readOnly: isReadOnly }}
         onChange={(text) => onChange(text ?? '')}
         onMount={(mounted) => {
           editor.current = mounted;

@@ -55,7 +55,7 @@ export function PropertyEntry({
         <p className="text-label text-ink-3 flex flex-wrap items-baseline gap-x-14 font-mono">
           <span>
             {value === undefined
-              ? 'no value at the state below'
+              ? 'no value at this state'
               : `${writtenValue(value)} ${property.unit === '1' ? '' : property.unit}`}
           </span>
           <span className="ml-auto flex gap-8">
@@ -103,7 +103,13 @@ export function PropertyEntry({
             <b className={note.kind === 'diverges' ? 'text-ochre' : 'text-ink'}>
               {note.kind === 'diverges' ? 'Diverges' : 'Assumes'}
             </b>{' '}
-            {note.text} {note.tex !== '' && <ScrollingFormula tex={note.tex} label="condition" />}
+            {note.kind === 'diverges' ? (
+              <>
+                where <ScrollingFormula tex={note.tex} text={note.text} label="where it diverges" />
+              </>
+            ) : (
+              note.text
+            )}
           </Note>
         ))}
       </aside>

@@ -60,7 +60,10 @@ export function valueAt(
 ): number | undefined {
   try {
     const e = fromJson(tree);
-    const names = [...new Set([...symbolsOf(e)].map(({ name }) => name))];
+    // π has its value from the evaluation itself.
+    const names = [...new Set([...symbolsOf(e)].map(({ name }) => name))].filter(
+      (name) => name !== 'pi',
+    );
     const values = names.map((name) => state[name] ?? derivation.values[name] ?? NaN);
     const [value = NaN] = compile([e], names)(values);
     return Number.isFinite(value) ? value : undefined;
