@@ -4,9 +4,23 @@ import { Umzug, type UmzugStorage } from 'umzug';
 import { people } from './0001-people.ts';
 import { notebooks } from './0002-notebooks.ts';
 import { versions } from './0003-versions.ts';
+import { registrations } from './0004-registrations.ts';
+import { orderOfEvents } from './0005-order-of-events.ts';
+import { lastEditor } from './0006-last-editor.ts';
+import { keptTexts } from './0007-kept-texts.ts';
+import { standingResults } from './0008-standing-results.ts';
 import type { Migration } from './migration.ts';
 
-const MIGRATIONS: readonly Migration[] = [people, notebooks, versions];
+export const MIGRATIONS: readonly Migration[] = [
+  people,
+  notebooks,
+  versions,
+  registrations,
+  orderOfEvents,
+  lastEditor,
+  keptTexts,
+  standingResults,
+];
 
 /** Names of the migrations done, in a table of the database itself. */
 function storage(sequelize: Sequelize): UmzugStorage {

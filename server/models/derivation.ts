@@ -24,9 +24,14 @@ export class DerivationRow extends Model<
   declare fault: CreationOptional<string | null>;
   /** The derivation as JSON, byte for byte as it was made. */
   declare result: CreationOptional<string | null>;
+  /** SHA-256 of result, a line feed and verification; the database computes it again. */
   declare resultHash: CreationOptional<string | null>;
   declare verification: CreationOptional<string | null>;
   declare verificationStatus: CreationOptional<CheckStatus | null>;
+  /** What derived the result: it may come out otherwise by another engine. */
+  declare engine: CreationOptional<string | null>;
+  /** How often this round was begun. */
+  declare attempts: CreationOptional<number>;
   /** Counts the times that the derivation was put into the queue. */
   declare round: CreationOptional<number>;
   declare cancelRequested: CreationOptional<boolean>;
@@ -47,6 +52,8 @@ export function defineDerivation(sequelize: Sequelize): typeof DerivationRow {
       resultHash: { type: DataTypes.TEXT },
       verification: { type: DataTypes.TEXT },
       verificationStatus: { type: DataTypes.TEXT },
+      engine: { type: DataTypes.TEXT },
+      attempts: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
       round: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
       cancelRequested: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
       updatedAt: DataTypes.DATE,

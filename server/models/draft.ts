@@ -1,4 +1,4 @@
-/** The draft of a model, and the texts that lost a race and are kept all the same. */
+/** The draft of a model, and every text that it has held or that lost a race. */
 import {
   DataTypes,
   Model,
@@ -44,6 +44,10 @@ export class KeptTextRow extends Model<
   declare source: string;
   /** The revision that the text was written on. */
   declare basedOn: number;
+  /** The revision that it became; null for one that lost a race. */
+  declare revision: number | null;
+  declare createdAt: CreationOptional<Date>;
+  declare person?: NonAttribute<PersonRow>;
 }
 
 export function defineKeptText(sequelize: Sequelize): typeof KeptTextRow {
@@ -54,6 +58,8 @@ export function defineKeptText(sequelize: Sequelize): typeof KeptTextRow {
       personId: { type: DataTypes.UUID, allowNull: false },
       source: { type: DataTypes.TEXT, allowNull: false },
       basedOn: { type: DataTypes.INTEGER, allowNull: false },
+      revision: { type: DataTypes.INTEGER },
+      createdAt: DataTypes.DATE,
     },
     { sequelize, tableName: 'kept_texts', updatedAt: false },
   );

@@ -7,12 +7,14 @@ import { defineGroup, defineMembership } from './group.ts';
 import { defineModel } from './model.ts';
 import { defineNotebook } from './notebook.ts';
 import { defineEmailToken, defineIdentity, definePerson } from './person.ts';
+import { defineRegistration } from './registration.ts';
 import { defineVersion } from './version.ts';
 
 export function defineModels(sequelize: Sequelize) {
   const Person = definePerson(sequelize);
   const Identity = defineIdentity(sequelize);
   const EmailToken = defineEmailToken(sequelize);
+  const Registration = defineRegistration(sequelize);
   const Group = defineGroup(sequelize);
   const Membership = defineMembership(sequelize);
   const Notebook = defineNotebook(sequelize);
@@ -29,6 +31,7 @@ export function defineModels(sequelize: Sequelize) {
   Notebook.belongsTo(Group, { foreignKey: 'groupId', as: 'group' });
   Model.belongsTo(Notebook, { foreignKey: 'notebookId', as: 'notebook' });
   Draft.belongsTo(Person, { foreignKey: 'updatedById', as: 'updatedBy' });
+  KeptText.belongsTo(Person, { foreignKey: 'personId', as: 'person' });
   Version.belongsTo(Model, { foreignKey: 'modelId', as: 'model' });
   Version.belongsTo(Person, { foreignKey: 'frozenById', as: 'frozenBy' });
   Version.hasOne(Derivation, { foreignKey: 'versionId', as: 'derivation' });
@@ -38,6 +41,7 @@ export function defineModels(sequelize: Sequelize) {
     Person,
     Identity,
     EmailToken,
+    Registration,
     Group,
     Membership,
     Notebook,

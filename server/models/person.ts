@@ -66,7 +66,7 @@ export class EmailTokenRow extends Model<
   /** SHA-256 of the token; the token itself is in the mail alone. */
   declare tokenHash: string;
   declare personId: string;
-  declare purpose: 'confirm' | 'reset';
+  declare purpose: 'reset';
   declare expiresAt: Date;
 }
 
