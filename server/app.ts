@@ -3,11 +3,10 @@ import { randomUUID } from 'node:crypto';
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import compression from 'compression';
-import connectPgSimple from 'connect-pg-simple';
 import express, { type Express, type RequestHandler } from 'express';
-import session from 'express-session';
+import type { Queue } from 'bullmq';
+import type { Store } from 'express-session';
 import type { Redis } from 'ioredis';
-import pg from 'pg';
 import { pinoHttp } from 'pino-http';
 import type { Config } from './config.ts';
 import type { Database } from './database.ts';
@@ -17,7 +16,10 @@ import { createPassport } from './middleware/authentication.ts';
 import { csrf } from './middleware/csrf.ts';
 import { nothingHere, problems } from './middleware/problems.ts';
 import { security } from './middleware/security.ts';
+import { sessions } from './middleware/sessions.ts';
+import { storableText } from './middleware/storableText.ts';
 import type { DerivationHub } from './queue/derivationHub.ts';
+import type { DerivationJob } from './queue/derivationQueue.ts';
 import { eventRoutes } from './routes/events.ts';
 import { groupRoutes } from './routes/groups.ts';
 import { healthRoutes } from './routes/health.ts';
@@ -28,6 +30,8 @@ import { sessionRoutes } from './routes/session.ts';
 export interface Dependencies {
   readonly database: Database;
   readonly redis: Redis;
+  readonly queue: Queue<DerivationJob>;
+  readonly sessionStore: Store;
   readonly mailer: Mailer;
   readonly hub: DerivationHub;
   readonly log: Logger;
@@ -35,30 +39,6 @@ export interface Dependencies {
   readonly clientFolder?: string | undefined;
   /** Serves the pages from the sources while developing. */
   readonly development?: RequestHandler | undefined;
-}
-
-const WEEK_MS = 7 * 24 * 3600 * 1000;
-
-function sessions(config: Config): RequestHandler {
-  const Store = connectPgSimple(session);
-  return session({
-    name: 'massieu',
-    secret: config.SESSION_SECRET,
-    resave: false,
-    saveUninitialized: false,
-    rolling: true,
-    store: new Store({
-      pool: new pg.Pool({ connectionString: config.DATABASE_URL, max: 5 }),
-      tableName: 'sessions',
-      pruneSessionInterval: config.NODE_ENV === 'test' ? false : 3600,
-    }),
-    cookie: {
-      httpOnly: true,
-      sameSite: 'lax',
-      secure: config.publicUrl.startsWith('https:'),
-      maxAge: WEEK_MS,
-    },
-  });
 }
 
 /** Hashed files for a year; the page itself is asked for each time. */
@@ -88,7 +68,8 @@ function pages(folder: string): RequestHandler[] {
 }
 
 export function createApp(config: Config, dependencies: Dependencies): Express {
-  const { database, redis, mailer, hub, log, clientFolder, development } = dependencies;
+  const { database, redis, queue, sessionStore, mailer, hub, log, clientFolder, development } =
+    dependencies;
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', config.TRUSTED_PROXIES);
@@ -119,7 +100,7 @@ export function createApp(config: Config, dependencies: Dependencies): Express {
     }),
   );
   app.use(security(config, development !== undefined));
-  app.use(healthRoutes(database, redis));
+  app.use(healthRoutes(database, redis, queue));
   app.use(
     compression({
       filter: (request, response) =>
@@ -130,7 +111,7 @@ export function createApp(config: Config, dependencies: Dependencies): Express {
 
   const passport = createPassport(config, database);
   const signedIn: RequestHandler[] = [
-    sessions(config),
+    sessions(config, sessionStore),
     passport.initialize() as RequestHandler,
     passport.session() as RequestHandler,
   ];
@@ -141,7 +122,8 @@ export function createApp(config: Config, dependencies: Dependencies): Express {
       response.setHeader('cache-control', 'no-store');
       next();
     },
-    express.json({ limit: '256kb' }),
+    express.json({ limit: '512kb' }),
+    storableText,
     ...signedIn,
     csrf(config.publicUrl),
     sessionRoutes({ config, database, mailer, passport }),

@@ -25,7 +25,7 @@ function asFault(error: unknown): Fault {
     return new Fault('validation', first ?? 'A field is not as it should be.', { fields });
   }
   const status = (error as { status?: unknown }).status;
-  if (status === 413) return new Fault('payload-too-large', 'Send at most 256 KiB at once.');
+  if (status === 413) return new Fault('payload-too-large', 'Send at most 512 KiB at once.');
   if (status === 400) return new Fault('validation', 'The body of the request is no valid JSON.');
   return new Fault(
     'internal',

@@ -12,12 +12,9 @@ export function eventRoutes(database: Database, hub: DerivationHub): Router {
   const router = Router();
 
   router.get('/models/:modelId/events', async (request, response) => {
-    const { model } = await accessModel(
-      database,
-      personOf(request).id,
-      request.params.modelId,
-      'read the group',
-    );
+    const person = personOf(request);
+    const access = () => accessModel(database, person.id, request.params.modelId, 'read the group');
+    const { model } = await access();
     response.writeHead(200, {
       'content-type': 'text/event-stream',
       'cache-control': 'no-cache, no-transform',
@@ -25,17 +22,31 @@ export function eventRoutes(database: Database, hub: DerivationHub): Router {
       'x-accel-buffering': 'no',
     });
     response.write(`retry: ${RETRY_MS}\n\n`);
-    const after = /^\d{1,18}$/.test(request.get('last-event-id') ?? '')
-      ? request.get('last-event-id')
-      : undefined;
-    const leave = await hub.follow(model.id, after, ({ id, data }) => {
-      response.write(`event: derivation\nid: ${id}\ndata: ${JSON.stringify(data)}\n\n`);
-    });
-    const heartbeat = setInterval(() => response.write(': still here\n\n'), HEARTBEAT_MS);
-    request.on('close', () => {
+    const after = /^\d{1,18}$/.exec(request.get('last-event-id') ?? '')?.[0];
+
+    let leave: (() => void) | undefined;
+    const heartbeat = setInterval(() => {
+      response.write(': still here\n\n');
+      // Somebody who has been taken out of the group meanwhile hears nothing more.
+      access().catch(() => response.end());
+    }, HEARTBEAT_MS);
+    response.on('close', () => {
       clearInterval(heartbeat);
-      leave();
+      leave?.();
     });
+    try {
+      leave = await hub.follow(model.id, after, {
+        tell({ id, data }) {
+          response.write(`event: derivation\nid: ${id}\ndata: ${JSON.stringify(data)}\n\n`);
+        },
+        end: () => response.end(),
+      });
+    } catch (error) {
+      request.log.error({ err: error }, 'the events of a model could not be followed');
+      response.end();
+    }
+    // The browser may have gone while the first events were read.
+    if (response.closed) leave?.();
   });
 
   return router;

@@ -4,6 +4,7 @@ import {
   createGroupSchema,
   createModelSchema,
   createNotebookSchema,
+  eventsPageSchema,
   updateNotebookSchema,
 } from '../../shared/contracts/models.ts';
 import type { Database } from '../database.ts';
@@ -11,6 +12,7 @@ import { personOf } from '../middleware/authentication.ts';
 import {
   createGroup,
   createNotebook,
+  listEvents,
   listGroups,
   readDesk,
   readGroup,
@@ -38,6 +40,12 @@ export function groupRoutes(database: Database): Router {
 
   router.get('/groups/:groupId', async (request, response) => {
     response.json(await readGroup(database, personOf(request).id, request.params.groupId));
+  });
+
+  router.get('/groups/:groupId/events', async (request, response) => {
+    const { id } = personOf(request);
+    const { before } = eventsPageSchema.parse(request.query);
+    response.json(await listEvents(database, id, request.params.groupId, before));
   });
 
   router.post('/groups/:groupId/notebooks', async (request, response) => {

@@ -1,9 +1,15 @@
 /** Whether the process lives, and whether it can do its work. */
 import { Router } from 'express';
+import type { Queue } from 'bullmq';
 import type { Redis } from 'ioredis';
 import type { Database } from '../database.ts';
+import type { DerivationJob } from '../queue/derivationQueue.ts';
 
-export function healthRoutes(database: Database, redis: Redis): Router {
+export function healthRoutes(
+  database: Database,
+  redis: Redis,
+  queue: Queue<DerivationJob>,
+): Router {
   const router = Router();
 
   router.get('/healthz', (_request, response) => {
@@ -11,13 +17,14 @@ export function healthRoutes(database: Database, redis: Redis): Router {
   });
 
   router.get('/readyz', async (_request, response) => {
-    const [databaseAnswers, redisAnswers] = await Promise.all([
-      answers(() => database.sequelize.query('SELECT 1')),
+    const [databaseAnswers, redisAnswers, queueAnswers] = await Promise.all([
+      answers(() => database.sequelize.query('SELECT 1 FROM people LIMIT 1')),
       answers(() => redis.ping()),
+      answers(() => queue.getJobCounts('waiting', 'active')),
     ]);
     response
-      .status(databaseAnswers && redisAnswers ? 200 : 503)
-      .json({ database: databaseAnswers, redis: redisAnswers });
+      .status(databaseAnswers && redisAnswers && queueAnswers ? 200 : 503)
+      .json({ database: databaseAnswers, redis: redisAnswers, queue: queueAnswers });
   });
 
   return router;

@@ -1,9 +1,16 @@
 /** Models, drafts, versions and their derivations. */
 import { Router } from 'express';
-import { freezeSchema, renameModelSchema, saveDraftSchema } from '../../shared/contracts/models.ts';
+import {
+  freezeSchema,
+  keptTextsPageSchema,
+  renameModelSchema,
+  saveDraftSchema,
+  versionsPageSchema,
+} from '../../shared/contracts/models.ts';
 import type { Database } from '../database.ts';
 import { personOf } from '../middleware/authentication.ts';
-import { readDraft, readModel, renameModel, saveDraft } from '../services/models.ts';
+import { listKeptTexts, readDraft, saveDraft } from '../services/drafts.ts';
+import { readModel, renameModel } from '../services/models.ts';
 import {
   cancelDerivation,
   deriveAgain,
@@ -33,8 +40,16 @@ export function modelRoutes(database: Database): Router {
     response.json(await saveDraft(database, personOf(request).id, request.params.modelId, body));
   });
 
+  router.get('/models/:modelId/draft/kept', async (request, response) => {
+    const { before } = keptTextsPageSchema.parse(request.query);
+    const { modelId } = request.params;
+    response.json(await listKeptTexts(database, personOf(request).id, modelId, before));
+  });
+
   router.get('/models/:modelId/versions', async (request, response) => {
-    response.json(await listVersions(database, personOf(request).id, request.params.modelId));
+    const { before } = versionsPageSchema.parse(request.query);
+    const { modelId } = request.params;
+    response.json(await listVersions(database, personOf(request).id, modelId, before));
   });
 
   router.post('/models/:modelId/versions', async (request, response) => {

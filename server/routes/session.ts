@@ -16,8 +16,9 @@ import type { Mailer } from '../mail/mailer.ts';
 import { csrfToken } from '../middleware/csrf.ts';
 import { signInLimits } from '../middleware/rateLimits.ts';
 import type { PersonRow } from '../models/person.ts';
-import { confirmEmail, register, requestReset, resetPassword } from '../services/accounts.ts';
+import { requestReset, resetPassword } from '../services/accounts.ts';
 import { listGroups } from '../services/groups.ts';
+import { confirmEmail, register } from '../services/registrations.ts';
 
 export interface SessionDependencies {
   readonly config: Config;
@@ -86,7 +87,9 @@ export function sessionRoutes(dependencies: SessionDependencies): Router {
   });
 
   router.post('/registrations', ...limits, async (request, response) => {
-    await register(database, mailer, config.publicUrl, registrationSchema.parse(request.body));
+    const registration = registrationSchema.parse(request.body);
+    mailer.requireMail();
+    mailer.post(await register(database, config.publicUrl, registration));
     response.status(202).json({});
   });
 
@@ -98,7 +101,9 @@ export function sessionRoutes(dependencies: SessionDependencies): Router {
 
   router.post('/password-resets', ...limits, async (request, response) => {
     const { email } = passwordResetRequestSchema.parse(request.body);
-    await requestReset(database, mailer, config.publicUrl, email);
+    mailer.requireMail();
+    const letter = await requestReset(database, config.publicUrl, email);
+    if (letter) mailer.post(letter);
     response.status(202).json({});
   });
 

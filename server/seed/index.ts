@@ -1,6 +1,6 @@
 /** Sets up the demonstration, once. */
 import type { Database } from '../database.ts';
-import { hashPassword } from '../services/accounts.ts';
+import { hashPassword } from '../services/passwords.ts';
 import { recordEvent } from '../services/groups.ts';
 import { createModel } from '../services/models.ts';
 import { freeze } from '../services/versions.ts';

@@ -1,120 +1,62 @@
-/** People: registering, confirming, passwords, and identities that a provider vouches for. */
-import { createHash, randomBytes } from 'node:crypto';
-import { hash, verify } from '@node-rs/argon2';
-import { Op } from 'sequelize';
-import type { Registration } from '../../shared/contracts/people.ts';
+/** People: passwords, and identities that a provider vouches for. */
+import { Op, UniqueConstraintError } from 'sequelize';
 import type { Database } from '../database.ts';
 import { Fault } from '../fault.ts';
-import type { Mailer } from '../mail/mailer.ts';
-import { confirmationMail, resetMail, someoneRegisteredMail } from '../mail/letters.ts';
+import { resetMail } from '../mail/letters.ts';
+import type { Letter } from '../mail/mailer.ts';
 import type { PersonRow } from '../models/person.ts';
+import { hashPassword, hashToken, isPassword, newToken } from './passwords.ts';
 
-const CONFIRM_HOURS = 48;
 const RESET_HOURS = 1;
 
-/** OWASP's recommendation for Argon2id: 19 MiB, 2 passes, one lane. */
-const ARGON = { memoryCost: 19_456, timeCost: 2, parallelism: 1 };
-
-export function hashPassword(password: string): Promise<string> {
-  return hash(password, ARGON);
-}
-
-/** Verified when nobody has the address, so that the answer takes as long as for somebody. */
-let decoy: Promise<string> | undefined;
-
-function hashToken(token: string): string {
-  return createHash('sha256').update(token).digest('hex');
-}
-
-async function issueToken(
+/** The letter with a link for a new password; undefined where nobody has the address. */
+export async function requestReset(
   { models }: Database,
-  person: PersonRow,
-  purpose: 'confirm' | 'reset',
-): Promise<string> {
-  const token = randomBytes(32).toString('base64url');
-  const hours = purpose === 'confirm' ? CONFIRM_HOURS : RESET_HOURS;
+  publicUrl: string,
+  email: string,
+): Promise<Letter | undefined> {
+  const person = await models.Person.findOne({ where: { email } });
+  if (!person) return undefined;
+  const token = newToken();
   await models.EmailToken.create({
     tokenHash: hashToken(token),
     personId: person.id,
-    purpose,
-    expiresAt: new Date(Date.now() + hours * 3_600_000),
+    purpose: 'reset',
+    expiresAt: new Date(Date.now() + RESET_HOURS * 3_600_000),
   });
-  return token;
-}
-
-/** Takes a token out of the table: it works once. */
-async function redeem(
-  { models }: Database,
-  token: string,
-  purpose: 'confirm' | 'reset',
-): Promise<PersonRow> {
-  const row = await models.EmailToken.findOne({
-    where: { tokenHash: hashToken(token), purpose, expiresAt: { [Op.gt]: new Date() } },
-  });
-  const person = row && (await models.Person.findByPk(row.personId));
-  const taken = row ? await models.EmailToken.destroy({ where: { tokenHash: row.tokenHash } }) : 0;
-  if (!person || taken === 0) {
-    throw new Fault('expired-link', 'It has been used or is too old. Ask for a new one.');
-  }
-  return person;
+  return resetMail(person, `${publicUrl}/new-password?token=${token}`);
 }
 
 /**
- * Registers somebody and sends the link that confirms the address. The answer is the same whether
- * or not the address is known, and an account that exists is left as it is.
+ * Sets a new password by a mailed link, and ends all sessions of the person: one of them may be
+ * that of somebody who knew the old password. Throws `expired-link` for a link used or too old.
  */
-export async function register(
-  database: Database,
-  mailer: Mailer,
-  publicUrl: string,
-  { name, email, password }: Registration,
-): Promise<void> {
-  const passwordHash = await hashPassword(password);
-  const [person, isNew] = await database.models.Person.findOrCreate({
-    where: { email },
-    defaults: { name, email, passwordHash },
-  });
-  if (!isNew && person.emailConfirmedAt) {
-    await mailer.send(someoneRegisteredMail(person, publicUrl));
-    return;
-  }
-  // Whoever registered an address first without confirming it has no claim on it.
-  if (!isNew) await person.update({ name, passwordHash });
-  await mailer.send(
-    confirmationMail(
-      person,
-      `${publicUrl}/confirm-email?token=${await issueToken(database, person, 'confirm')}`,
-    ),
-  );
-}
-
-export async function confirmEmail(database: Database, token: string): Promise<PersonRow> {
-  const person = await redeem(database, token, 'confirm');
-  return person.update({ emailConfirmedAt: new Date() });
-}
-
-export async function requestReset(
-  database: Database,
-  mailer: Mailer,
-  publicUrl: string,
-  email: string,
-): Promise<void> {
-  const person = await database.models.Person.findOne({ where: { email } });
-  if (!person) return;
-  const token = await issueToken(database, person, 'reset');
-  await mailer.send(resetMail(person, `${publicUrl}/new-password?token=${token}`));
-}
-
-/** Sets a new password by a mailed link, which also proves the address. */
 export async function resetPassword(
-  database: Database,
+  { models, sequelize }: Database,
   token: string,
   password: string,
-): Promise<PersonRow> {
-  const person = await redeem(database, token, 'reset');
-  return person.update({
-    passwordHash: await hashPassword(password),
-    emailConfirmedAt: person.emailConfirmedAt ?? new Date(),
+): Promise<void> {
+  const passwordHash = await hashPassword(password);
+  await sequelize.transaction(async (transaction) => {
+    const row = await models.EmailToken.findOne({
+      where: {
+        tokenHash: hashToken(token),
+        purpose: 'reset',
+        expiresAt: { [Op.gt]: new Date() },
+      },
+      lock: transaction.LOCK.UPDATE,
+      transaction,
+    });
+    if (!row) {
+      throw new Fault('expired-link', 'It has been used or is too old. Ask for a new one.');
+    }
+    const { personId } = row;
+    await models.EmailToken.destroy({ where: { personId }, transaction });
+    await models.Person.update({ passwordHash }, { where: { id: personId }, transaction });
+    await sequelize.query(`DELETE FROM sessions WHERE sess->'passport'->>'user' = :personId`, {
+      replacements: { personId },
+      transaction,
+    });
   });
 }
 
@@ -125,28 +67,28 @@ export async function authenticate(
   password: string,
 ): Promise<PersonRow> {
   const person = await models.Person.findOne({ where: { email } });
-  decoy ??= hashPassword(randomBytes(16).toString('hex'));
-  const isRight = await verify(person?.passwordHash ?? (await decoy), password);
-  if (!person?.passwordHash || !isRight) {
-    throw new Fault(
-      'wrong-credentials',
-      'No account has this address with this password. Check both, or ask for a new password.',
-    );
-  }
-  if (!person.emailConfirmedAt) {
+  const registration = person
+    ? null
+    : await models.Registration.findOne({ where: { email }, order: [['createdAt', 'DESC']] });
+  const isRight = await isPassword((person ?? registration)?.passwordHash, password);
+  if (person && isRight) return person;
+  if (registration && isRight) {
     throw new Fault(
       'email-not-confirmed',
       'Open the link in the mail that was sent to this address; register again to get a new one.',
     );
   }
-  return person;
+  throw new Fault(
+    'wrong-credentials',
+    'No account has this address with this password. Check both, or ask for a new password.',
+  );
 }
 
 export interface VouchedIdentity {
   readonly provider: string;
   readonly subject: string;
   readonly name: string;
-  /** Addresses that the provider says it has verified, in lower case. */
+  /** Addresses that the provider says it has verified, in lower case; the primary one first. */
   readonly verifiedEmails: readonly string[];
 }
 
@@ -155,36 +97,46 @@ export interface VouchedIdentity {
  * made new.
  */
 export async function personOfIdentity(
+  database: Database,
+  identity: VouchedIdentity,
+): Promise<PersonRow> {
+  const known = await knownPerson(database, identity);
+  if (known) return known;
+  try {
+    return await newIdentity(database, identity);
+  } catch (error) {
+    // The same person came twice at once, and the other one was first.
+    const other =
+      error instanceof UniqueConstraintError ? await knownPerson(database, identity) : undefined;
+    if (other) return other;
+    throw error;
+  }
+}
+
+async function knownPerson(
+  { models }: Database,
+  { provider, subject }: VouchedIdentity,
+): Promise<PersonRow | undefined> {
+  const known = await models.Identity.findOne({ where: { provider, subject }, include: 'person' });
+  return known?.person;
+}
+
+async function newIdentity(
   { models, sequelize }: Database,
   { provider, subject, name, verifiedEmails }: VouchedIdentity,
 ): Promise<PersonRow> {
   return sequelize.transaction(async (transaction) => {
-    const known = await models.Identity.findOne({
-      where: { provider, subject },
-      include: 'person',
-      transaction,
-    });
-    if (known?.person) return known.person;
-    const byEmail =
-      verifiedEmails.length === 0
-        ? null
-        : await models.Person.findOne({
-            where: { email: [...verifiedEmails], emailConfirmedAt: { [Op.ne]: null } },
-            transaction,
-          });
-    // An address that somebody registered without confirming it is not taken over, nor given away.
     const [email = null] = verifiedEmails;
-    const isTaken =
-      email !== null &&
-      !byEmail &&
-      (await models.Person.count({ where: { email }, transaction })) > 0;
+    // Every account has confirmed its address: registrations that have not are none yet.
     const person =
-      byEmail ??
+      (email === null
+        ? null
+        : await models.Person.findOne({ where: { email: [...verifiedEmails] }, transaction })) ??
       (await models.Person.create(
         {
           name: name.slice(0, 120) || 'Somebody',
-          email: isTaken ? null : email,
-          emailConfirmedAt: email === null || isTaken ? null : new Date(),
+          email,
+          emailConfirmedAt: email === null ? null : new Date(),
         },
         { transaction },
       ));

@@ -2,7 +2,32 @@
 import type { Transaction } from 'sequelize';
 import type { Database } from '../database.ts';
 import type { DerivationRow } from '../models/derivation.ts';
+import type { DerivationState } from '../../shared/contracts/models.ts';
 import { describeProgress } from './describe.ts';
+
+const OPEN: readonly DerivationState[] = ['queued', 'deriving', 'verifying'];
+
+/** Whether the derivation waits or runs. */
+export function isOpen(state: DerivationState): boolean {
+  return OPEN.includes(state);
+}
+
+/**
+ * How a derivation stands after it came to nothing. Where a result stands already, it was derived
+ * again only to compare: the version stays complete, and the fault tells what became of that.
+ */
+export function unsuccessful(
+  derivation: Pick<DerivationRow, 'resultHash' | 'progress' | 'stage'>,
+  state: 'failed' | 'cancelled',
+  fault: string | null,
+): Pick<DerivationRow, 'state' | 'progress' | 'stage' | 'fault'> {
+  if (derivation.resultHash !== null) {
+    const stage = `complete; deriving again ${state === 'failed' ? 'failed' : 'was cancelled'}`;
+    return { state: 'complete', progress: 1, stage, fault };
+  }
+  const stage = state === 'cancelled' ? 'cancelled' : derivation.stage;
+  return { state, progress: derivation.progress, stage, fault };
+}
 
 /** The intent to derive, written with whatever gave rise to it; a relay takes it to the queue. */
 export async function putIntoOutbox(

@@ -53,6 +53,17 @@ export async function eventsOf(
   return rows.map(describeEvent);
 }
 
+/** The record of a group, the latest first, page by page. */
+export async function listEvents(
+  database: Database,
+  personId: string,
+  groupId: string,
+  before: string | undefined,
+): Promise<RecordedEvent[]> {
+  const { group } = await accessGroup(database, personId, groupId, 'read the group');
+  return eventsOf(database, [group.id], before);
+}
+
 async function notebookSummaries(
   { sequelize }: Database,
   groupIds: readonly string[],

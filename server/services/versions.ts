@@ -1,17 +1,19 @@
 /** Freezing a draft, reading versions, and what a person may do to their derivation. */
 import { createHash } from 'node:crypto';
-import type { Transaction } from 'sequelize';
+import { Op, type Transaction } from 'sequelize';
 import { derivationSchema, verificationSchema } from '../../shared/contracts/derivation.ts';
 import type { Version, VersionSummary } from '../../shared/contracts/models.ts';
-import { analyse } from '../../shared/language/index.ts';
+import { analyse, type Formulation } from '../../shared/language/index.ts';
 import type { Database } from '../database.ts';
 import { Fault, notFound } from '../fault.ts';
 import type { DerivationRow } from '../models/derivation.ts';
 import type { VersionRow } from '../models/version.ts';
 import { accessModel } from './access.ts';
-import { announce, putIntoOutbox } from './derivations.ts';
+import { announce, isOpen, putIntoOutbox, unsuccessful } from './derivations.ts';
 import { describeVersion } from './describe.ts';
 import { recordEvent } from './groups.ts';
+
+const VERSIONS_SHOWN = 200;
 
 export function hashOf(text: string): string {
   return createHash('sha256').update(text, 'utf8').digest('hex');
@@ -29,37 +31,34 @@ export async function freeze(
   { revision, note }: { revision: number; note: string },
 ): Promise<VersionSummary> {
   const { model, group } = await accessModel(database, personId, modelId, 'freeze a version');
+  const { formulation } = await soundDraft(database, model.id, revision);
+  const hash = hashOf(formulation.normalizedSource);
   const number = await database.sequelize.transaction(async (transaction) => {
     const draft = await database.models.Draft.findByPk(model.id, {
       transaction,
       lock: transaction.LOCK.UPDATE,
     });
-    if (!draft) throw notFound();
-    if (draft.revision !== revision) {
-      throw new Fault(
-        'conflict',
-        'The draft has been saved again since you looked. Read it once more, then freeze it.',
-      );
-    }
-    const { formulation, diagnostics } = analyse(draft.source);
-    if (!formulation) {
-      throw new Fault(
-        'formulation-at-fault',
-        'Mend the faults that are marked in the formulation; a version must be sound.',
-        { diagnostics },
-      );
-    }
-    const last = await database.models.Version.max<number | null, VersionRow>('number', {
+    // The text was studied before the lock was taken, and may have been saved again since.
+    if (draft?.revision !== revision) throw movedOn();
+    const last = await database.models.Version.findOne({
       where: { modelId: model.id },
+      attributes: ['number', 'hash'],
+      order: [['number', 'DESC']],
       transaction,
     });
+    if (last?.hash === hash) {
+      throw new Fault(
+        'conflict',
+        `This text stands already as version ${last.number}. Change it before it is frozen again.`,
+      );
+    }
     const version = await database.models.Version.create(
       {
         modelId: model.id,
-        number: (last ?? 0) + 1,
+        number: (last?.number ?? 0) + 1,
         source: draft.source,
         normalizedSource: formulation.normalizedSource,
-        hash: hashOf(formulation.normalizedSource),
+        hash,
         note,
         frozenById: personId,
       },
@@ -89,6 +88,33 @@ export async function freeze(
   return describeVersion(await findVersion(database, model.id, number));
 }
 
+function movedOn(): Fault {
+  return new Fault(
+    'conflict',
+    'The draft has been saved again since you looked. Read it once more, then freeze it.',
+  );
+}
+
+/** The draft of this revision, read and found to be without faults. */
+async function soundDraft(
+  { models }: Database,
+  modelId: string,
+  revision: number,
+): Promise<{ formulation: Formulation }> {
+  const draft = await models.Draft.findByPk(modelId);
+  if (!draft) throw notFound();
+  if (draft.revision !== revision) throw movedOn();
+  const { formulation, diagnostics } = analyse(draft.source);
+  if (!formulation) {
+    throw new Fault(
+      'formulation-at-fault',
+      'Mend the faults that are marked in the formulation; a version must be sound.',
+      { diagnostics },
+    );
+  }
+  return { formulation };
+}
+
 async function findVersion(
   { models }: Database,
   modelId: string,
@@ -106,21 +132,26 @@ async function findVersion(
   return version as VersionRow & { derivation: DerivationRow };
 }
 
-/** The versions of a model, latest first. */
+/** The versions of a model, the latest first; before a number, for the next page. */
 export async function listVersions(
   database: Database,
   personId: string,
   modelId: string,
+  before?: number,
 ): Promise<VersionSummary[]> {
   const { model } = await accessModel(database, personId, modelId, 'read the group');
   const versions = await database.models.Version.findAll({
-    where: { modelId: model.id },
+    where: {
+      modelId: model.id,
+      ...(before === undefined ? {} : { number: { [Op.lt]: before } }),
+    },
     attributes: { exclude: ['source', 'normalizedSource'] },
     include: [
       'frozenBy',
       { association: 'derivation', attributes: { exclude: ['result', 'verification'] } },
     ],
     order: [['number', 'DESC']],
+    limit: VERSIONS_SHOWN,
   });
   return versions.map(describeVersion);
 }
@@ -149,7 +180,7 @@ export async function cancelDerivation(
   modelId: string,
   number: number,
 ): Promise<VersionSummary> {
-  const { model } = await accessModel(database, personId, modelId, 'control a derivation');
+  const { model, group } = await accessModel(database, personId, modelId, 'control a derivation');
   await database.sequelize.transaction(async (transaction) => {
     const version = await findVersion(database, model.id, number, transaction);
     const derivation = await database.models.Derivation.findByPk(version.derivation.id, {
@@ -159,11 +190,23 @@ export async function cancelDerivation(
     if (!derivation) throw notFound();
     if (derivation.state === 'queued') {
       await derivation.update(
-        { state: 'cancelled', stage: 'cancelled while it waited', cancelRequested: true },
+        { ...unsuccessful(derivation, 'cancelled', null), cancelRequested: true },
         { transaction },
       );
       await announce(database, derivation, version, transaction);
-    } else if (derivation.state === 'deriving' || derivation.state === 'verifying') {
+      await recordEvent(
+        database,
+        {
+          groupId: group.id,
+          personId,
+          kind: 'derivation-cancelled',
+          modelId: model.id,
+          title: model.title,
+          versionNumber: version.number,
+        },
+        transaction,
+      );
+    } else if (isOpen(derivation.state)) {
       await derivation.update({ cancelRequested: true }, { transaction });
     }
   });
@@ -185,7 +228,7 @@ export async function deriveAgain(
       lock: transaction.LOCK.UPDATE,
     });
     if (!derivation) throw notFound();
-    if (!['complete', 'failed', 'cancelled'].includes(derivation.state)) return;
+    if (isOpen(derivation.state)) return;
     await derivation.update(
       {
         state: 'queued',
@@ -193,6 +236,7 @@ export async function deriveAgain(
         stage: 'waiting for a worker',
         fault: null,
         cancelRequested: false,
+        attempts: 0,
         round: derivation.round + 1,
       },
       { transaction },

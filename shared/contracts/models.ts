@@ -94,6 +94,19 @@ export const saveDraftSchema = z.object({
 });
 export type SaveDraft = z.infer<typeof saveDraftSchema>;
 
+/** GET /api/models/:id/draft/kept: what the draft has held, and texts that lost a race. */
+export const keptTextSchema = z.object({
+  id: z.string(),
+  source: z.string(),
+  /** The revision that the text became; null for one that lost a race. */
+  revision: z.number().nullable(),
+  basedOn: z.number(),
+  keptAt: timeSchema,
+  person: byPersonSchema,
+});
+export type KeptText = z.infer<typeof keptTextSchema>;
+export const keptTextsPageSchema = z.object({ before: timeSchema.optional() });
+
 export const draftConflictSchema = z.looseObject({ current: draftSchema });
 
 /**
@@ -157,6 +170,17 @@ export const eventSchema = z.object({
   versionNumber: z.number().nullable(),
 });
 export type RecordedEvent = z.infer<typeof eventSchema>;
+
+/** GET /api/groups/:id/events, and the versions of a model: a page behind the one that is known. */
+export const eventsPageSchema = z.object({
+  before: z
+    .string()
+    .regex(/^\d{1,18}$/)
+    .optional(),
+});
+export const versionsPageSchema = z.object({
+  before: z.coerce.number().int().min(1).max(2_147_483_647).optional(),
+});
 
 export const createGroupSchema = z.object({
   name: titleSchema,
