@@ -12,10 +12,18 @@ export interface Outcome {
   readonly verificationStatus: CheckStatus;
 }
 
+/** Counted up when the same source comes to give other bytes than before. */
+export const ENGINE = '1';
+
 /** The share of a job that deriving takes on the progress bar; verifying takes the rest. */
 const DERIVING_SHARE = 0.4;
 
-/** Derives and verifies. Throws an Error with a sentence for the reader where the source has faults. */
+/** A formulation from which nothing can be derived, in a sentence for its author. */
+export class CannotDerive extends Error {
+  override name = 'CannotDerive';
+}
+
+/** Derives and verifies. Throws CannotDerive where the source has faults. */
 export function work(source: string, progress: Progress): Outcome {
   const { derivation, model, diagnostics } = derive(source, {
     onProgress: (stage, fraction) => {
@@ -24,12 +32,12 @@ export function work(source: string, progress: Progress): Outcome {
   });
   if (!derivation || !model) {
     const fault = diagnostics.find(({ severity }) => severity === 'error');
-    throw new Error(
+    throw new CannotDerive(
       fault ? `Line ${fault.line}: ${fault.message} ${fault.hint}` : 'Nothing could be derived.',
     );
   }
   const verification = verify(model, {
-    onProgress: (stage: string, fraction: number) => {
+    onProgress: (stage, fraction) => {
       progress('verifying', stage, DERIVING_SHARE + fraction * (1 - DERIVING_SHARE));
     },
   });

@@ -1,6 +1,6 @@
 /** The worker process: takes derivations from the queue. As many may run as there are cores. */
 import process from 'node:process';
-import { Worker, type ConnectionOptions } from 'bullmq';
+import { WaitingError, Worker, type ConnectionOptions } from 'bullmq';
 import { ConfigFault, readConfig } from '../server/config.ts';
 import { openDatabase } from '../server/database.ts';
 import { createLog } from '../server/log.ts';
@@ -10,7 +10,7 @@ import {
   type DerivationJob,
 } from '../server/queue/derivationQueue.ts';
 import { openOutboxRelay } from '../server/queue/outboxRelay.ts';
-import { giveUp, processDerivation } from './processDerivation.ts';
+import { giveUp, processDerivation, WorkerEnds } from './processDerivation.ts';
 import { sweepLost } from './sweepLost.ts';
 
 const SWEEP_EVERY_MS = 15_000;
@@ -33,9 +33,15 @@ async function main(): Promise<void> {
   const limits = { seconds: config.DERIVATION_SECONDS, megabytes: config.DERIVATION_MEGABYTES };
   const worker = new Worker<DerivationJob>(
     config.QUEUE_NAME,
-    async ({ data }) => {
-      log.info(data, 'derivation begins');
-      await processDerivation(database, data, limits, log, shutdown.signal);
+    async (job, token) => {
+      log.info(job.data, 'derivation begins');
+      try {
+        await processDerivation(database, job.data, limits, log, shutdown.signal);
+      } catch (error) {
+        if (!(error instanceof WorkerEnds)) throw error;
+        await job.moveToWait(token);
+        throw new WaitingError();
+      }
     },
     {
       connection: connection as unknown as ConnectionOptions,
@@ -49,7 +55,7 @@ async function main(): Promise<void> {
   );
   worker.on('failed', (job, error) => {
     log.warn({ err: error, ...job?.data }, 'derivation failed');
-    if (job && job.attemptsMade >= (job.opts.attempts ?? 1) && !shutdown.signal.aborted) {
+    if (job && job.attemptsMade >= (job.opts.attempts ?? 1)) {
       giveUp(database, job.data, error.message).catch((fault: unknown) => {
         log.error({ err: fault }, 'the failure could not be written');
       });

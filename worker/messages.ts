@@ -3,6 +3,8 @@ import type { Outcome } from './derivation.ts';
 
 export interface ToChild {
   readonly source: string;
+  /** The worker ends the child after `limits.seconds`; the child ends itself somewhat later. */
+  readonly milliseconds: number;
 }
 
 export type FromChild =

@@ -5,74 +5,26 @@ import type { Logger } from '../server/log.ts';
 import type { DerivationRow } from '../server/models/derivation.ts';
 import type { VersionRow } from '../server/models/version.ts';
 import type { DerivationJob } from '../server/queue/derivationQueue.ts';
-import { announce } from '../server/services/derivations.ts';
-import { recordEvent } from '../server/services/groups.ts';
+import { unsuccessful } from '../server/services/derivations.ts';
+import { ENGINE, type Outcome } from './derivation.ts';
 import { runChild, type Ending, type Limits } from './runChild.ts';
+import { writeFailure, writeProgress, type Change } from './writeProgress.ts';
 
 /** Progress is written at most this often; a change of stage waits for its turn. */
 const WRITE_EVERY_MS = 150;
 const LOOK_FOR_CANCEL_MS = 250;
 
-type Change = Partial<
-  Pick<
-    DerivationRow,
-    | 'state'
-    | 'progress'
-    | 'stage'
-    | 'fault'
-    | 'result'
-    | 'resultHash'
-    | 'verification'
-    | 'verificationStatus'
-  >
->;
+/** A formulation that takes its worker down each time is not tried for ever. */
+const MOST_ATTEMPTS = 20;
 
-const SETTLED: readonly string[] = ['complete', 'failed', 'cancelled'];
-
-/**
- * Writes a change of a derivation of this round, with its announcement, in one transaction. False
- * where the derivation has been settled or put into the queue anew meanwhile.
- */
-async function write(
-  database: Database,
-  version: VersionRow,
-  { derivationId, round }: DerivationJob,
-  change: Change,
-): Promise<boolean> {
-  return database.sequelize.transaction(async (transaction) => {
-    const derivation = await database.models.Derivation.findByPk(derivationId, {
-      transaction,
-      lock: transaction.LOCK.UPDATE,
-    });
-    if (!derivation || derivation.round !== round || SETTLED.includes(derivation.state))
-      return false;
-    await derivation.update(change, { transaction });
-    await announce(database, derivation, version, transaction);
-    if (change.state && SETTLED.includes(change.state)) {
-      const model = await database.models.Model.findByPk(version.modelId, {
-        include: 'notebook',
-        transaction,
-      });
-      await recordEvent(
-        database,
-        {
-          groupId: model?.notebook?.groupId ?? '',
-          personId: null,
-          kind: `derivation-${change.state}` as 'derivation-complete',
-          modelId: version.modelId,
-          title: model?.title ?? '',
-          versionNumber: version.number,
-        },
-        transaction,
-      );
-    }
-    return true;
-  });
+/** The worker ends before the job is done; the job is for another one. */
+export class WorkerEnds extends Error {
+  override name = 'WorkerEnds';
 }
 
 /**
- * Does the job; doing it again is harmless. Throws where trying again may help, which leaves that
- * to the queue.
+ * Does the job; doing it again is harmless. Throws WorkerEnds when `shutdown` is aborted, and
+ * another error where trying again may help, which is left to the queue.
  */
 export async function processDerivation(
   database: Database,
@@ -86,53 +38,79 @@ export async function processDerivation(
   });
   const { version } = derivation ?? {};
   if (!derivation || !version || derivation.round !== job.round) return;
-  const standing = derivation.resultHash;
-  const begun = await write(database, version, job, {
+  if (derivation.attempts >= MOST_ATTEMPTS) {
+    await writeFailure(database, version, job, 'The worker ended each time it derived this.');
+    return;
+  }
+  const begun = await writeProgress(database, version, job, ({ attempts }) => ({
     state: 'deriving',
     progress: 0,
     stage: 'reading the formulation',
-  });
+    attempts: attempts + 1,
+  }));
   if (!begun) return;
 
   const ending = await watch(database, version, job, limits, shutdown);
-  if (shutdown.aborted) throw new Error('the worker is ending; another one takes the job');
+  if (shutdown.aborted && ending.kind !== 'outcome') {
+    throw new WorkerEnds('the worker is ending; another one takes the job');
+  }
   switch (ending.kind) {
-    case 'outcome': {
-      const { result, verification, verificationStatus } = ending.outcome;
-      const resultHash = createHash('sha256').update(result, 'utf8').digest('hex');
-      if (standing !== null && standing !== resultHash) {
-        await write(database, version, job, {
-          state: 'failed',
-          stage: 'compared with the result that stands',
-          fault:
-            'Deriving again gave another result than the one that stands. The version keeps its first result; tell the site administrator.',
-        });
-        log.error(
-          { versionId: version.id, standing, resultHash },
-          'a derivation is not repeatable',
-        );
-        return;
+    case 'outcome':
+      if (!(await writeOutcome(database, version, job, ending.outcome))) {
+        log.error({ versionId: version.id }, 'deriving again gave another result');
       }
-      await write(database, version, job, {
-        state: 'complete',
-        progress: 1,
-        stage: standing === null ? 'complete' : 'complete, and byte for byte as before',
-        result,
-        resultHash,
-        verification,
-        verificationStatus,
-      });
       return;
-    }
     case 'fault':
-      await write(database, version, job, { state: 'failed', fault: ending.message });
+      await writeFailure(database, version, job, ending.message);
       return;
     case 'cancelled':
-      await write(database, version, job, { state: 'cancelled', stage: 'cancelled' });
+      await writeProgress(
+        database,
+        version,
+        job,
+        (row) => unsuccessful(row, 'cancelled', null),
+        'derivation-cancelled',
+      );
       return;
     case 'died':
       throw new Error(ending.message);
   }
+}
+
+/** Writes the outcome; false where it differs from the one that stands. */
+async function writeOutcome(
+  database: Database,
+  version: VersionRow,
+  job: DerivationJob,
+  outcome: Outcome,
+): Promise<boolean> {
+  const { result, verification } = outcome;
+  const resultHash = createHash('sha256').update(`${result}\n${verification}`).digest('hex');
+  let isAsBefore = true;
+  const change = (standing: DerivationRow): Change => {
+    if (standing.resultHash === null) {
+      return {
+        ...outcome,
+        resultHash,
+        engine: ENGINE,
+        state: 'complete',
+        progress: 1,
+        stage: 'complete',
+      };
+    }
+    isAsBefore = standing.resultHash === resultHash;
+    return isAsBefore
+      ? { state: 'complete', progress: 1, stage: 'complete; derived again, byte for byte the same' }
+      : unsuccessful(
+          standing,
+          'failed',
+          standing.engine === ENGINE
+            ? 'Deriving again gave other bytes. The version keeps its first result; tell the site administrator.'
+            : 'This release of Massieu derives otherwise than the one that derived the version. The version keeps its first result.',
+        );
+  };
+  await writeProgress(database, version, job, change, 'derivation-complete');
+  return isAsBefore;
 }
 
 /** Writes that a job has failed for good, after the queue has tried often enough. */
@@ -145,10 +123,12 @@ export async function giveUp(
     include: 'version',
   });
   if (!derivation?.version) return;
-  await write(database, derivation.version, job, {
-    state: 'failed',
-    fault: `The derivation was tried several times and ended each time: ${reason}. Try again; if it stays, tell the site administrator.`,
-  });
+  await writeFailure(
+    database,
+    derivation.version,
+    job,
+    `The derivation was tried several times and ended each time: ${reason}. Try again; if it stays, tell the site administrator.`,
+  );
 }
 
 /** Runs the child while its progress is written and the wish to cancel is looked for. */
@@ -164,13 +144,16 @@ async function watch(
     cancel.abort();
   };
   shutdown.addEventListener('abort', abort, { once: true });
+  if (shutdown.aborted) abort();
   let latest: Change | undefined;
   let writing: Promise<unknown> = Promise.resolve();
   const flush = (): void => {
     const change = latest;
     latest = undefined;
-    if (change)
-      writing = writing.then(() => write(database, version, job, change)).catch(() => undefined);
+    if (!change) return;
+    writing = writing
+      .then(() => writeProgress(database, version, job, change))
+      .catch(() => undefined);
   };
   const writer = setInterval(flush, WRITE_EVERY_MS);
   const looker = setInterval(() => {
@@ -185,9 +168,7 @@ async function watch(
   }, LOOK_FOR_CANCEL_MS);
   try {
     return await runChild(version.source, limits, cancel.signal, ({ state, stage, fraction }) => {
-      const isFirst = latest === undefined;
       latest = { state, stage, progress: Math.min(Math.max(fraction, 0), 1) };
-      if (isFirst && fraction === 0) flush();
     });
   } finally {
     clearInterval(writer);

@@ -23,9 +23,12 @@ const CHILD = fileURLToPath(
   new URL(isSource ? './derivationChild.ts' : './derivationChild.js', import.meta.url),
 );
 
+/** A child whose worker is gone ends itself so long after its time is up. */
+const SELF_END_AFTER_MS = 2_000;
+
 /** Exit codes by which Node and the kernel end a process that is out of memory. */
 function ranOutOfMemory(code: number | null, signal: NodeJS.Signals | null): boolean {
-  return code === 134 || signal === 'SIGABRT';
+  return code === 134 || signal === 'SIGABRT' || signal === 'SIGTRAP';
 }
 
 /**
@@ -52,11 +55,11 @@ export function runChild(
         NODE_ENV: process.env['NODE_ENV'],
         MASSIEU_TEST_HOLD: process.env['MASSIEU_TEST_HOLD'],
       },
-      stdio: ['ignore', 'ignore', 'ignore', 'ipc'],
+      stdio: ['ignore', 'ignore', 'inherit', 'ipc'],
     });
     let ending: Ending | undefined;
-    const kill = (with_: Ending): void => {
-      ending ??= with_;
+    const kill = (reason: Ending): void => {
+      ending ??= reason;
       child.kill('SIGKILL');
     };
     const timer = setTimeout(() => {
@@ -90,6 +93,7 @@ export function runChild(
         ending ?? { kind: 'died', message: `the process ended with ${signal ?? `code ${code}`}` },
       );
     });
-    child.send({ source } satisfies ToChild);
+    const milliseconds = limits.seconds * 1000 + SELF_END_AFTER_MS;
+    child.send({ source, milliseconds } satisfies ToChild);
   });
 }
