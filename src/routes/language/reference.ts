@@ -25,8 +25,23 @@ const statements: Chapter = {
   entries: [
     {
       name: 'ensemble',
-      says: 'Fixes the natural variables. In the canonical ensemble these are N, V and T, and the partition function is Q.',
+      says: 'Fixes the natural variables and the function: canonical N, V, T and Q; grand canonical μ, V, T and Xi; isothermal-isobaric N, p, T and Delta; microcanonical N, V, U and W.',
       example: 'ensemble canonical',
+    },
+    {
+      name: 'species',
+      says: 'Several components. Their numbers N_w, N_e, their sum N and the mole fractions x_w, x_e are then known.',
+      example: 'species w "water", e "ethanol"',
+    },
+    {
+      name: 'extent',
+      says: 'Another extensive variable in place of V: sites, an area, a length. Its conjugate takes the place of the pressure.',
+      example: 'extent M [1] "adsorption sites"',
+    },
+    {
+      name: 'field',
+      says: 'One more natural variable, with the name of its response.',
+      example: 'field B [T] response M_B',
     },
     {
       name: 'constant',
@@ -42,6 +57,21 @@ const statements: Chapter = {
       name: 'let',
       says: 'An abbreviation. It is kept as a symbol of its own in the results wherever that reads better.',
       example: 'let Lambda = h / sqrt(2 pi m k T)',
+    },
+    {
+      name: 'let u(r)',
+      says: 'A function of arguments, for potentials and the like.',
+      example: 'let u(r) = 4 eps ((s/r)^12 - (s/r)^6)',
+    },
+    {
+      name: 'list',
+      says: 'Numbers of one unit, addressed as g(i), E(i) with i from 1.',
+      example: 'list g = 5, 3, 1\nlist E [cm^-1] = 0, 158.3, 227.0',
+    },
+    {
+      name: 'order',
+      says: 'An internal variable at which ln of the partition function is stationary. It is read and checked; properties of such models are not derived yet.',
+      example: 'order theta between 0 and 1  "coverage"',
     },
     {
       name: 'q and Q',
@@ -100,6 +130,21 @@ const expressions: Chapter = {
       example: 'let z = exp(-eps / (k T))',
     },
     {
+      name: 'sum, product',
+      says: 'Over a whole number, whose upper end may be inf.',
+      example: 'let q_rot = sum J from 0 to inf { (2 J + 1) exp(-J (J + 1) Theta_r / T) }',
+    },
+    {
+      name: 'integral',
+      says: 'Over a variable, which has the dimension of its ends or the one said in brackets.',
+      example: 'let I = integral r [m] from 0 to inf { r^2 exp(-u(r)/(k T)) }',
+    },
+    {
+      name: 'cases',
+      says: 'The first branch whose condition holds.',
+      example: 'let u(r) = cases { r < s: inf;  r < 2 s: -eps;  otherwise: 0 }',
+    },
+    {
       name: 'Greek letters',
       says: 'As letters or by name: θ and theta are the same. What follows _ is a subscript.',
       example: 'let Λ = h / sqrt(2 π m k T)',
@@ -124,6 +169,11 @@ const functions: Chapter = {
     { name: 'sin, cos, tan', says: 'Circular functions of an angle in radian.' },
     { name: 'arcsinh, arctanh', says: 'Inverse hyperbolic functions.' },
     { name: 'erf(x)', says: 'Error function.' },
+    {
+      name: 'polylog(s, z), besselI(n, x), debye(n, x)',
+      says: 'Polylogarithm, modified Bessel function of the first kind, Debye function.',
+    },
+    { name: 'heaviside(x)', says: 'The unit step.' },
     {
       name: 'Gamma, lnGamma, digamma',
       says: 'Gamma function, its logarithm, the derivative of that.',
@@ -180,17 +230,21 @@ const properties: Chapter = {
   opening:
     'From ln Q follow, by their definitions, these properties. Claims and reports may use them by these names.',
   entries: [
-    { name: 'p', says: 'Pressure.' },
+    { name: 'p', says: 'Pressure, or the conjugate of another extent.' },
     {
-      name: 'U, S, A, G, H',
-      says: 'Internal energy, entropy, Helmholtz and Gibbs energy, enthalpy.',
+      name: 'U, S, A, G, H, Omega',
+      says: 'Internal energy, entropy, Helmholtz and Gibbs energy, enthalpy, grand potential.',
     },
-    { name: 'mu', says: 'Chemical potential.' },
+    { name: 'mu', says: 'Chemical potential; mu_w for a species w.' },
     {
       name: 'C_V, C_p, gamma',
       says: 'Heat capacities at constant volume and pressure; their ratio.',
     },
-    { name: 'kappa_T, alpha', says: 'Isothermal compressibility, cubic expansion coefficient.' },
+    {
+      name: 'kappa_T, kappa_S, alpha',
+      says: 'Isothermal and isentropic compressibility, cubic expansion coefficient.',
+    },
+    { name: 'pi_T', says: 'Internal pressure, (∂U/∂V) at constant temperature.' },
     { name: 'mu_JT', says: 'Joule–Thomson coefficient.' },
     { name: 'w', says: 'Speed of sound, where a mass m is given.' },
     { name: 'Z', says: 'Compression factor, p V/(N k T).' },
