@@ -13,6 +13,7 @@ import {
 } from '../units/dimension.ts';
 import { describeDimension } from '../units/formatDimension.ts';
 import { parseUnit } from '../units/parseUnit.ts';
+import { bitsOf } from './exactSize.ts';
 import type { Findings } from './findings.ts';
 import { LONGEST_NUMBER_BITS } from './limits.ts';
 import type { ExpressionTree, NameTree } from './syntax.ts';
@@ -171,8 +172,4 @@ export function constantValue(
   };
 
   return visit(tree);
-}
-
-function bitsOf({ numerator, denominator }: Rational): number {
-  return (numerator.toString(16).length + denominator.toString(16).length) * 4;
 }

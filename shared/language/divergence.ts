@@ -13,6 +13,10 @@ import { compile } from '../numerics/compile.ts';
 import { big } from '../numerics/bigNumber.ts';
 import { evaluatePrecisely } from '../numerics/precise.ts';
 
+import type { Findings } from './findings.ts';
+import type { BinderTree } from './syntax.ts';
+import { trialStates, type Known } from './trialStates.ts';
+
 /** A sum, product or integral with an infinite end, or an integral from 0. */
 export interface OpenBinder {
   readonly what: 'sum' | 'product' | 'integral';
@@ -27,6 +31,23 @@ export type State = ReadonlyMap<string, number>;
 
 const FAR = [1e3, 1e6, 1e12, 1e25, 1e50, 1e100];
 const PRECISE = ['1e3', '1e6', '1e12', '1e24'];
+
+/** Reports every sum and integral that surely has no value. */
+export function refuseDivergence(
+  openBinders: readonly { readonly tree: BinderTree; readonly binder: OpenBinder }[],
+  known: Known,
+  findings: Findings,
+): void {
+  if (openBinders.length === 0) return;
+  const states = trialStates(known);
+  for (const { tree, binder } of openBinders) {
+    const end = divergence(binder, states);
+    if (end === undefined) continue;
+    const name = tree.variable.spelled;
+    if (tree.what === 'integral') findings.add('divergent-integral', tree.span, { name, end });
+    else findings.add('divergent-sum', tree.span, { what: tree.what, name });
+  }
+}
 
 /** At which end it surely diverges: `inf`, `0`, or undefined where nothing is known. */
 export function divergence(binder: OpenBinder, states: readonly State[]): 'inf' | '0' | undefined {

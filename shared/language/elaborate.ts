@@ -1,36 +1,28 @@
 /** From the tree of a source text to the checked formulation. */
 import * as C from '../algebra/construct.ts';
-import * as Q from '../algebra/rational.ts';
-import type { Rational } from '../algebra/rational.ts';
 import { dependsOn } from '../algebra/traverse.ts';
 import { DIMENSIONLESS, equalDimensions, dimension } from '../units/dimension.ts';
 import { describeDimension, formatDimension } from '../units/formatDimension.ts';
 import { elaborateClaims } from './claims.ts';
-import { declaredValue, type ConstantValue, type KnownValues } from './constantValue.ts';
 import { collectDeclarations, type Declarations } from './declarations.ts';
+import { DeclaredNumbers } from './declaredNumbers.ts';
 import { closed, PURE } from './dimensionCheck.ts';
-import { divergence } from './divergence.ts';
+import { refuseDivergence } from './divergence.ts';
 import { domainOf } from './domain.ts';
 import { ExpressionElaborator } from './elaborateExpression.ts';
 import type { Findings } from './findings.ts';
-import type {
-  Abbreviation,
-  DeclaredQuantity,
-  Formulation,
-  OrderParameter,
-  Report,
-} from './formulation.ts';
+import type { Abbreviation, Formulation, OrderParameter, Report } from './formulation.ts';
 import { FormulationScope } from './formulationScope.ts';
 import { logarithmOf, takeApart } from './logarithm.ts';
 import { nameOrder } from './nameOrder.ts';
-import { orderDefinitions } from './orderDefinitions.ts';
+import { orderDefinitions, refuseCircle } from './orderDefinitions.ts';
 import type { Typed } from './scope.ts';
+import { diluteState } from './trialStates.ts';
 import {
   PARTITION_FUNCTIONS,
   type ExpressionTree,
   type SourceTree,
   type Statement,
-  type UnitTree,
 } from './syntax.ts';
 import { visitNames } from './walkTree.ts';
 
@@ -57,7 +49,7 @@ class Elaboration {
   private readonly declarations: Declarations;
   private readonly scope: FormulationScope;
   private readonly expressions: ExpressionElaborator;
-  private readonly constants = new Map<string, ConstantValue | 'poisoned'>();
+  private readonly numbers: DeclaredNumbers;
 
   constructor(tree: SourceTree, findings: Findings) {
     this.tree = tree;
@@ -66,6 +58,7 @@ class Elaboration {
     const { variables, isEnsembleKnown } = this.declarations;
     this.scope = new FormulationScope(this.declarations, variables, findings, isEnsembleKnown);
     this.expressions = new ExpressionElaborator(this.scope, findings);
+    this.numbers = new DeclaredNumbers(this.declarations, this.scope, this.expressions);
     if (this.declarations.of('factorials').length > 0) this.expressions.factorials = 'exact';
   }
 
@@ -77,9 +70,9 @@ class Elaboration {
       }
     }
     this.checkUnitsOfVariables();
-    const quantities = this.quantities();
-    this.lists();
-    const orderParameters = this.orderParameters();
+    const quantities = this.numbers.quantities();
+    this.numbers.lists();
+    const orderParameters = this.numbers.orderParameters();
     const abbreviations = this.definitions();
     const stated = this.partitionFunction();
     scope.lnValue = stated && { e: stated.lnFunction, d: PURE };
@@ -88,12 +81,14 @@ class Elaboration {
     const molar = this.reports('molar');
     const reports = this.reports('report');
     const claims = elaborateClaims(declarations.of('claim'), this.expressions, scope);
+    const { ensemble, species, variables } = declarations;
+    const constants = scope.naturalConstants();
+    const known = { constants, quantities, orderParameters, variables };
     if (findings.errorCount === 0) {
-      this.refuseDivergence(quantities, orderParameters);
+      refuseDivergence(this.expressions.openBinders, known, findings);
       this.warnOfUnusedNames();
     }
     if (findings.errorCount > 0 || !stated) return { formulation: undefined, scope };
-    const { ensemble, species, variables } = declarations;
     const formulation: Formulation = {
       title: this.tree.title,
       ensemble,
@@ -101,7 +96,7 @@ class Elaboration {
       species,
       variables,
       quantities,
-      naturalConstants: scope.naturalConstants(),
+      naturalConstants: constants,
       abbreviations,
       orderParameters,
       factorials: this.expressions.factorials,
@@ -112,7 +107,7 @@ class Elaboration {
       claims,
       domain: domainOf(
         stated.lnFunction,
-        this.diluteState(quantities, orderParameters),
+        diluteState(known),
         orderParameters.map(({ symbol }) => symbol),
       ),
       nameOrder: nameOrder(this.trees(), [
@@ -124,173 +119,10 @@ class Elaboration {
     return { formulation, scope };
   }
 
-  /** The unit as a value of one of it; the fault in it is reported once. */
-  private unitOf(unit: UnitTree | undefined): ConstantValue | undefined {
-    if (!unit) return { value: Q.ONE, dimension: DIMENSIONLESS };
-    const found = this.expressions.unit(unit);
-    return found && { value: found.factor, dimension: found.dimension };
-  }
-
   private checkUnitsOfVariables(): void {
     for (const { unit } of [...this.declarations.of('extent'), ...this.declarations.of('field')]) {
-      this.unitOf(unit);
+      this.numbers.unitOf(unit);
     }
-  }
-
-  private readonly knownConstant: KnownValues = (name) => this.constants.get(name.name);
-
-  private quantities(): DeclaredQuantity[] {
-    const { declarations } = this;
-    const statements = [...declarations.of('constant'), ...declarations.of('parameter')].sort(
-      (a, b) => a.span.start - b.span.start,
-    );
-    // Constants may be built from one another, in any order of the lines.
-    const byName = new Map(statements.map((s) => [s.name.name, s]));
-    const { order, circles } = orderDefinitions(statements, (statement) => {
-      const needed: (typeof statements)[number][] = [];
-      visitNames(statement.value, ({ name }) => {
-        const other = byName.get(name);
-        if (other?.kind === 'constant') needed.push(other);
-      });
-      return needed;
-    });
-    circles.forEach((circle) => {
-      this.refuseCircle(circle);
-      for (const { name } of circle) this.constants.set(name.name, 'poisoned');
-    });
-    const found = new Map<Statement<'constant' | 'parameter'>, DeclaredQuantity>();
-    for (const statement of order) {
-      const { name } = statement;
-      const quantity =
-        this.constants.get(name.name) === 'poisoned' ? undefined : this.quantity(statement);
-      if (!quantity) {
-        this.constants.set(name.name, 'poisoned');
-        this.scope.define(name.name, { kind: 'poisoned' });
-        continue;
-      }
-      found.set(statement, quantity);
-      if (statement.kind === 'constant') this.constants.set(name.name, quantity);
-      visitNames(statement.value, (used) => this.scope.used.add(used.name));
-      this.scope.define(name.name, {
-        kind: 'value',
-        value: { e: quantity.symbol, d: closed(quantity.dimension) },
-        what: `the ${quantity.kind} ${name.spelled}`,
-      });
-    }
-    return statements.flatMap((statement) => found.get(statement) ?? []);
-  }
-
-  private quantity(statement: Statement<'constant' | 'parameter'>): DeclaredQuantity | undefined {
-    const { kind, name, unit, description, span } = statement;
-    const { findings } = this;
-    const one = this.unitOf(unit);
-    if (!one) return undefined;
-    const { value: tree, uncertainty } = withoutUncertainty(statement.value);
-    this.checkUnitsIn(tree);
-    const value = declaredValue(tree, one, findings, this.knownConstant);
-    if (!value) return undefined;
-    let bounds: { lower: Rational; upper: Rational } | undefined;
-    if (statement.bounds) {
-      this.checkUnitsIn(statement.bounds.lower);
-      this.checkUnitsIn(statement.bounds.upper);
-      const lower = declaredValue(statement.bounds.lower, one, findings, this.knownConstant);
-      const upper = declaredValue(statement.bounds.upper, one, findings, this.knownConstant);
-      if (!lower || !upper) return undefined;
-      bounds = { lower, upper };
-      this.checkBounds(statement, value, bounds);
-    }
-    const isPositive = bounds
-      ? Q.sign(bounds.lower) >= 0
-      : kind === 'constant' && Q.sign(value) > 0;
-    return {
-      kind,
-      name: name.name,
-      symbol: C.symbol(name.name, { positive: isPositive }),
-      dimension: one.dimension,
-      unit: unit?.text.trim() ?? '',
-      unitFactor: one.value,
-      value,
-      ...(uncertainty ? { uncertainty: Q.multiply(uncertainty, one.value) } : {}),
-      ...(bounds ? { bounds } : {}),
-      description,
-      span,
-      valueSpan: statement.value.span,
-    };
-  }
-
-  /** Reports faults of units inside a value. */
-  private checkUnitsIn(tree: ExpressionTree): void {
-    if (tree.kind === 'number' && tree.unit) this.expressions.unit(tree.unit);
-    if (tree.kind === 'product') tree.factors.forEach(({ factor }) => this.checkUnitsIn(factor));
-    if (tree.kind === 'sum') tree.terms.forEach(({ term }) => this.checkUnitsIn(term));
-    if (tree.kind === 'negation' || tree.kind === 'group') this.checkUnitsIn(tree.of);
-    if (tree.kind === 'power') this.checkUnitsIn(tree.base);
-  }
-
-  private checkBounds(
-    { name, value: tree, bounds }: Statement<'constant' | 'parameter'>,
-    value: Rational,
-    { lower, upper }: { lower: Rational; upper: Rational },
-  ): void {
-    const { findings } = this;
-    if (!bounds) return;
-    if (Q.compare(lower, upper) > 0) {
-      findings.add('bounds-reversed', {
-        start: bounds.lower.span.start,
-        end: bounds.upper.span.end,
-      });
-    } else if (Q.compare(value, lower) < 0 || Q.compare(value, upper) > 0) {
-      findings.add('start-outside-bounds', tree.span, {
-        name: name.spelled,
-        value: findings.textAt(tree.span),
-        lower: findings.textAt(bounds.lower.span),
-        upper: findings.textAt(bounds.upper.span),
-      });
-    }
-  }
-
-  private lists(): void {
-    for (const statement of this.declarations.of('list')) {
-      const { name } = statement;
-      const one = this.unitOf(statement.unit);
-      const values: Rational[] = [];
-      for (const tree of statement.values) {
-        this.checkUnitsIn(tree);
-        const value = one && declaredValue(tree, one, this.findings, this.knownConstant);
-        if (value) values.push(value);
-      }
-      const isSound = one && values.length === statement.values.length;
-      this.scope.define(
-        name.name,
-        isSound ? { kind: 'list', values, dimension: one.dimension } : { kind: 'poisoned' },
-      );
-    }
-  }
-
-  private orderParameters(): OrderParameter[] {
-    const pure: ConstantValue = { value: Q.ONE, dimension: DIMENSIONLESS };
-    return this.declarations.of('order').flatMap((statement) => {
-      const { name, stationary, description, span } = statement;
-      const lower = declaredValue(statement.lower, pure, this.findings, this.knownConstant);
-      const upper = declaredValue(statement.upper, pure, this.findings, this.knownConstant);
-      if (!lower || !upper) {
-        this.scope.define(name.name, { kind: 'poisoned' });
-        return [];
-      }
-      if (Q.compare(lower, upper) > 0) {
-        this.findings.add('bounds-reversed', {
-          start: statement.lower.span.start,
-          end: statement.upper.span.end,
-        });
-      }
-      const symbol = C.symbol(name.name, { positive: Q.sign(lower) >= 0 });
-      this.scope.define(name.name, {
-        kind: 'value',
-        value: { e: symbol, d: PURE },
-        what: `the order parameter ${name.spelled}`,
-      });
-      return [{ name: name.name, symbol, lower, upper, stationary, description, span }];
-    });
   }
 
   /** Abbreviations, functions and q, each after what it needs. */
@@ -317,7 +149,10 @@ class Elaboration {
       return needed;
     });
     for (const circle of circles) {
-      this.refuseCircle(circle);
+      refuseCircle(
+        circle.map(({ name }) => name),
+        this.findings,
+      );
       for (const { name } of circle) this.scope.define(name.name, { kind: 'poisoned' });
     }
     const abbreviations = new Map<Definition, Abbreviation>();
@@ -360,17 +195,6 @@ class Elaboration {
     }
     const isPlain = e.kind === 'number' || e.kind === 'infinity';
     return { e: isPlain ? e : C.abbreviation(definition.name.name, e), d: resolved };
-  }
-
-  private refuseCircle(circle: readonly Pick<Definition, 'name'>[]): void {
-    const [first] = circle;
-    if (!first) return;
-    const names = circle.map(({ name }) => name.spelled);
-    const words =
-      names.length === 1
-        ? `${names[0] ?? ''} is defined by itself`
-        : `${names.slice(0, -1).join(', ')} and ${names.at(-1) ?? ''} are defined by one another`;
-    this.findings.add('circular-definition', first.name.span, { names: words });
   }
 
   private partitionFunction():
@@ -438,7 +262,7 @@ class Elaboration {
     const { expressions, findings, scope } = this;
     return this.declarations.of(kind).flatMap((statement): Report[] => {
       const { name, unit, description, span } = statement;
-      const one = this.unitOf(unit);
+      const one = this.numbers.unitOf(unit);
       const value = expressions.elaborate(statement.value);
       if (!one || !value) {
         scope.define(name.name, { kind: 'poisoned' });
@@ -473,30 +297,6 @@ class Elaboration {
     });
   }
 
-  private refuseDivergence(
-    quantities: readonly DeclaredQuantity[],
-    orderParameters: readonly OrderParameter[],
-  ): void {
-    const { openBinders } = this.expressions;
-    if (openBinders.length === 0) return;
-    const values = this.knownNumbers(quantities, orderParameters);
-    const states = TRIAL_STATES.map((roles) => {
-      const state = new Map(values);
-      for (const { name, role } of this.declarations.variables) state.set(name, roles[role]);
-      return state;
-    });
-    for (const { tree, binder } of openBinders) {
-      const end = divergence(binder, states);
-      if (end === undefined) continue;
-      const name = tree.variable.spelled;
-      if (tree.what === 'integral') {
-        this.findings.add('divergent-integral', tree.span, { name, end });
-      } else {
-        this.findings.add('divergent-sum', tree.span, { what: tree.what, name });
-      }
-    }
-  }
-
   private warnOfUnusedNames(): void {
     const { declarations, scope, findings } = this;
     const mass = dimension(0, 1);
@@ -519,32 +319,6 @@ class Elaboration {
     }
   }
 
-  /** The numbers behind the names that are no natural variables; order parameters in mid-range. */
-  private knownNumbers(
-    quantities: readonly DeclaredQuantity[],
-    orderParameters: readonly OrderParameter[],
-  ): Map<string, number> {
-    const numbers = new Map<string, number>();
-    for (const constant of this.scope.naturalConstants()) {
-      numbers.set(constant.name, Q.toNumber(constant.value));
-    }
-    for (const { name, value } of quantities) numbers.set(name, Q.toNumber(value));
-    for (const { name, lower, upper } of orderParameters) {
-      numbers.set(name, Q.toNumber(Q.divide(Q.add(lower, upper), Q.rational(2))));
-    }
-    return numbers;
-  }
-
-  /** Values at which a dilute system exists, for the sign of denominators. */
-  private diluteState(
-    quantities: readonly DeclaredQuantity[],
-    orderParameters: readonly OrderParameter[],
-  ): Map<string, number> {
-    const state = this.knownNumbers(quantities, orderParameters);
-    for (const { name, role } of this.declarations.variables) state.set(name, DILUTE[role]);
-    return state;
-  }
-
   private trees(): ExpressionTree[] {
     return this.tree.statements.flatMap((statement): ExpressionTree[] => {
       switch (statement.kind) {
@@ -564,50 +338,4 @@ class Elaboration {
       }
     });
   }
-}
-
-type Role = Formulation['variables'][number]['role'];
-
-/** In SI units: ten molecules in a large box at a high temperature. */
-const DILUTE: Readonly<Record<Role, number>> = {
-  temperature: 1000,
-  extent: 1e6,
-  number: 10,
-  'chemical potential': -1e-18,
-  pressure: 1e-6,
-  energy: 1e-19,
-  field: 1,
-};
-
-/** Widely different states, so that what has no value at any of them has none at all. */
-const TRIAL_STATES: readonly Readonly<Record<Role, number>>[] = [
-  DILUTE,
-  {
-    temperature: 10,
-    extent: 1e-3,
-    number: 1e22,
-    'chemical potential': -1e-16,
-    pressure: 1e5,
-    energy: 1e2,
-    field: 0.01,
-  },
-  {
-    temperature: 1e5,
-    extent: 1e-9,
-    number: 1e3,
-    'chemical potential': -1e-20,
-    pressure: 1e9,
-    energy: 1e-12,
-    field: -10,
-  },
-];
-
-/** The value without the uncertainty that a plain number may carry. */
-function withoutUncertainty(tree: ExpressionTree): {
-  value: ExpressionTree;
-  uncertainty?: Rational;
-} {
-  if (tree.kind !== 'number' || !tree.uncertainty) return { value: tree };
-  const { uncertainty, ...value } = tree;
-  return { value, uncertainty };
 }

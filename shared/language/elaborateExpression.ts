@@ -8,19 +8,16 @@ import * as C from '../algebra/construct.ts';
 import { childrenOf, type Expression, type Relation } from '../algebra/expression.ts';
 import { FUNCTIONS, isFunctionName } from '../algebra/functions.ts';
 import * as Q from '../algebra/rational.ts';
-import type { Rational } from '../algebra/rational.ts';
 import { isPositive } from '../algebra/sign.ts';
-import { equalDimensions, isDimensionless, type Dimension } from '../units/dimension.ts';
-import { describeDimension } from '../units/formatDimension.ts';
 import { parseUnit, type UnitValue } from '../units/parseUnit.ts';
-import type { Repair, Span } from './diagnostic.ts';
-import { closed, DimensionSolver, PURE, type OpenDimension } from './dimensionCheck.ts';
+import { closed, PURE, type OpenDimension } from './dimensionCheck.ts';
+import { DimensionDemands } from './dimensionDemands.ts';
 import type { OpenBinder } from './divergence.ts';
+import { bitsOf, bitsOfNumber } from './exactSize.ts';
 import type { Findings } from './findings.ts';
 import { hasFactorial, logarithmOf, type Factorials } from './logarithm.ts';
 import { DEEPEST_EXPRESSION, LONGEST_NUMBER_BITS, MOST_PARTS } from './limits.ts';
-import { ENERGY, TEMPERATURE } from './properties.ts';
-import type { Entity, Typed } from './scope.ts';
+import { FIXED_NAMES, type Entity, type Typed } from './scope.ts';
 import type {
   BinderTree,
   CallTree,
@@ -57,24 +54,7 @@ function depthOf(e: Expression): number {
   return depth + 1;
 }
 
-function bitsOf({ numerator, denominator }: Rational): number {
-  return (numerator.toString(16).length + denominator.toString(16).length) * 4;
-}
-
-function bitsOfNumber(e: Expression): number {
-  if (e.kind === 'number') return bitsOf(e.value);
-  if (e.kind === 'product') return bitsOf(e.coefficient);
-  if (e.kind === 'sum') {
-    let bits = bitsOf(e.constant);
-    for (const term of e.terms) if (term.kind === 'product') bits += bitsOf(term.coefficient);
-    return bits;
-  }
-  return 0;
-}
-
-export class ExpressionElaborator {
-  readonly findings: Findings;
-  readonly solver = new DimensionSolver();
+export class ExpressionElaborator extends DimensionDemands {
   factorials: Factorials = 'Stirling';
   /** Sums and integrals that may have no value, for when the values of constants are known. */
   readonly openBinders: { readonly tree: BinderTree; readonly binder: OpenBinder }[] = [];
@@ -85,8 +65,8 @@ export class ExpressionElaborator {
   private mayBeInfinite = false;
 
   constructor(names: Names, findings: Findings) {
+    super(findings);
     this.names = names;
-    this.findings = findings;
   }
 
   /** The expression of a tree; inf is allowed at its top where `mayBeInfinite`. */
@@ -148,14 +128,6 @@ export class ExpressionElaborator {
         : [{ title: `write ${replacement}`, edits: [{ span, text: replacement }] }],
     );
     return undefined;
-  }
-
-  /** Words for a dimension: `an energy, J`. */
-  words(d: OpenDimension): string {
-    const known = this.solver.settle(d);
-    return known
-      ? describeDimension(known)
-      : 'no number: a unit in it has an exponent that does not cancel';
   }
 
   private visit(tree: ExpressionTree): Typed | undefined {
@@ -546,7 +518,9 @@ export class ExpressionElaborator {
   private freshName({ name, spelled, span }: NameTree): string {
     const depth = this.local.get(name)?.length ?? 0;
     const meaning = this.names.meaningOf(name);
-    if (meaning !== undefined) {
+    if (FIXED_NAMES.includes(name)) {
+      this.findings.add('fixed-name', span, { name: spelled, what: meaning ?? name });
+    } else if (meaning !== undefined) {
       this.findings.add('name-shadowed', span, { name: spelled, what: meaning });
     }
     if (depth > 0) return `${name}_run${depth}`;
@@ -591,74 +565,4 @@ export class ExpressionElaborator {
       ? { e: C.piecewise(branches, otherwise.e), d: otherwise.d }
       : undefined;
   }
-
-  private agree(
-    a: OpenDimension,
-    b: OpenDimension,
-    left: ExpressionTree,
-    right: ExpressionTree,
-    rule: string,
-  ): boolean {
-    if (this.solver.unify(a, b)) return true;
-    const text = (tree: ExpressionTree): string => shortened(this.findings.textAt(tree.span));
-    this.findings.add('dimension', right.span, {
-      message: `${rule}, but ${text(left)} is ${this.words(a)}, and ${text(right)} is ${this.words(b)}.`,
-      hint: 'Look for a missing or a superfluous factor in one of them.',
-    });
-    return false;
-  }
-
-  private isPure(d: OpenDimension, tree: ExpressionTree, rule: string): boolean {
-    if (this.solver.unify(d, PURE)) return true;
-    this.complain(tree, rule, d);
-    return false;
-  }
-
-  /** Something that should be a number is not; an energy is divided by k T, a temperature by T. */
-  private complain(tree: ExpressionTree, rule: string, d: OpenDimension): void {
-    const { span } = tree;
-    const known = this.solver.settle(d);
-    const { hint, repairs } = wayOut(tree, span, known);
-    this.findings.add(
-      'dimension',
-      span,
-      {
-        message: `${rule}, but ${shortened(this.findings.textAt(span))} is ${this.words(d)}.`,
-        hint,
-      },
-      repairs,
-    );
-  }
-}
-
-function shortened(text: string): string {
-  return text.length <= 60 ? text : `${text.slice(0, 57)}…`;
-}
-
-function wayOut(
-  tree: ExpressionTree,
-  span: Span,
-  known: Dimension | undefined,
-): { hint: string; repairs: Repair[] } {
-  const divisor = !known
-    ? undefined
-    : equalDimensions(known, ENERGY)
-      ? { words: 'k T', text: '(k T)' }
-      : equalDimensions(known, TEMPERATURE)
-        ? { words: 'T', text: 'T' }
-        : undefined;
-  if (!divisor) {
-    const isNumber = known !== undefined && isDimensionless(known);
-    return { hint: isNumber ? '' : 'Divide it by a quantity of the same dimension.', repairs: [] };
-  }
-  const isSingle = tree.kind === 'name' || tree.kind === 'group' || tree.kind === 'call';
-  const at = (offset: number): Span => ({ start: offset, end: offset });
-  const edits = [
-    ...(isSingle ? [] : [{ span: at(span.start), text: '(' }]),
-    { span: at(span.end), text: `${isSingle ? '' : ')'} / ${divisor.text}` },
-  ];
-  return {
-    hint: `Divide it by ${divisor.words}.`,
-    repairs: [{ title: `divide by ${divisor.words}`, edits }],
-  };
 }

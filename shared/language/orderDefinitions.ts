@@ -1,5 +1,8 @@
 /** Definitions in the order in which each needs only what stands before it, and the circles. */
 
+import type { Findings } from './findings.ts';
+import type { NameTree } from './syntax.ts';
+
 export interface Ordered<T> {
   readonly order: readonly T[];
   /** Each circle once, in the order in which its members refer to one another. */
@@ -37,4 +40,16 @@ export function orderDefinitions<T>(
     }
   }
   return { order, circles };
+}
+
+/** Reports a circle of definitions by its names, where the first of them stands. */
+export function refuseCircle(circle: readonly NameTree[], findings: Findings): void {
+  const [first] = circle;
+  if (!first) return;
+  const names = circle.map(({ spelled }) => spelled);
+  const words =
+    names.length === 1
+      ? `${first.spelled} is defined by itself`
+      : `${names.slice(0, -1).join(', ')} and ${names.at(-1) ?? ''} are defined by one another`;
+  findings.add('circular-definition', first.span, { names: words });
 }

@@ -7,20 +7,17 @@
  */
 import { FUNCTIONS, isFunctionName } from '../algebra/functions.ts';
 import * as Q from '../algebra/rational.ts';
-import { Cursor } from './cursor.ts';
+import {
+  isFraction,
+  refuseAdjacentNumbers,
+  refuseDivision,
+  type Factor,
+} from './ambiguousProduct.ts';
+import type { Cursor } from './cursor.ts';
 import type { Span } from './diagnostic.ts';
 import { DEEPEST_NESTING } from './limits.ts';
-import type {
-  BinderTree,
-  ConditionTree,
-  ExpressionTree,
-  NameTree,
-  NumberTree,
-  ProductTree,
-} from './syntax.ts';
+import type { BinderTree, ConditionTree, ExpressionTree, NameTree, NumberTree } from './syntax.ts';
 import type { Token } from './token.ts';
-
-type Factor = ProductTree['factors'][number];
 
 /** True for the functions that are part of the language, `sqrt` among them. */
 export function isBuiltInFunction(name: string): boolean {
@@ -102,7 +99,7 @@ export class ExpressionParser {
     const factors: Factor[] = [{ joint: 'first', factor: this.power() }];
     let isAmbiguous = false;
     const refuse = (): void => {
-      this.refuseDivision(factors);
+      refuseDivision(factors, this.cursor.findings);
       isAmbiguous = true;
     };
     for (;;) {
@@ -117,7 +114,7 @@ export class ExpressionParser {
         const factor = this.power();
         factors.push({ joint: 'beside', factor });
         if (last?.joint === '/' && !isFraction(factors)) refuse();
-        else if (last) this.refuseAdjacentNumbers(last.factor, factor);
+        else if (last) refuseAdjacentNumbers(last.factor, factor, this.cursor.findings);
       } else {
         break;
       }
@@ -364,83 +361,4 @@ export class ExpressionParser {
     cursor.close('}', opened);
     return { kind: 'cases', branches, otherwise, span: this.from(token.span.start) };
   }
-
-  private refuseAdjacentNumbers(left: ExpressionTree, right: ExpressionTree): void {
-    if (left.kind !== 'number' || right.kind !== 'number' || left.unit) return;
-    const { findings } = this.cursor;
-    const span = { start: left.span.start, end: right.span.end };
-    findings.add('adjacent-numbers', span, { text: findings.textAt(span) }, [
-      {
-        title: 'write * between them',
-        edits: [{ span: { start: left.span.end, end: right.span.start }, text: ' * ' }],
-      },
-    ]);
-  }
-
-  /** `a / b c` and `a / b / c`: the last of the factors is the one too many. */
-  private refuseDivision(factors: readonly Factor[]): void {
-    const { findings } = this.cursor;
-    const divisor = factors.at(-2)?.factor;
-    const last = factors.at(-1);
-    if (!divisor || !last) return;
-    let head = factors.length - 3;
-    while (head > 0 && factors[head]?.joint === 'beside') head--;
-    const start = factors[Math.max(0, head)]?.factor.span.start ?? divisor.span.start;
-    const span = { start, end: last.factor.span.end };
-    const between = { start: divisor.span.end, end: last.factor.span.start };
-    const before = (offset: number): Span => ({ start: offset, end: offset });
-    const words = {
-      divisor: findings.textAt(divisor.span),
-      last: findings.textAt(last.factor.span),
-    };
-    const { end } = last.factor.span;
-    const repairs =
-      last.joint === '/'
-        ? [
-            {
-              title: `divide by both: / (${words.divisor} * ${words.last})`,
-              edits: [
-                { span: before(divisor.span.start), text: '(' },
-                { span: between, text: ' * ' },
-                { span: before(end), text: ')' },
-              ],
-            },
-            {
-              title: `divide by the quotient: / (${words.divisor} / ${words.last})`,
-              edits: [
-                { span: before(divisor.span.start), text: '(' },
-                { span: before(end), text: ')' },
-              ],
-            },
-          ]
-        : [
-            {
-              title: `divide by both: / (${words.divisor} ${words.last})`,
-              edits: [
-                { span: before(divisor.span.start), text: '(' },
-                { span: before(end), text: ')' },
-              ],
-            },
-            {
-              title: `multiply by ${words.last}: / ${words.divisor} * ${words.last}`,
-              edits: [{ span: between, text: ' * ' }],
-            },
-          ];
-    findings.add('ambiguous-division', span, { text: findings.textAt(span) }, repairs);
-  }
-}
-
-function isPlainNumber(tree: ExpressionTree | undefined): boolean {
-  return tree?.kind === 'number' && !tree.unit && !tree.uncertainty;
-}
-
-/** True where the factor before the last closes a quotient of two numbers that begins a product. */
-function isFraction(factors: readonly Factor[]): boolean {
-  const numerator = factors.at(-3);
-  const divisor = factors.at(-2);
-  return (
-    isPlainNumber(numerator?.factor) &&
-    isPlainNumber(divisor?.factor) &&
-    (numerator?.joint === 'first' || numerator?.joint === '*')
-  );
 }

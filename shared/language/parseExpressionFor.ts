@@ -10,8 +10,8 @@ import { Findings } from './findings.ts';
 import type { Formulation, NaturalConstant, RangeOfVariable } from './formulation.ts';
 import { FormulationScope } from './formulationScope.ts';
 import { lex } from './lexer.ts';
+import { parseClaim } from './parseClaim.ts';
 import { ExpressionParser } from './parseExpression.ts';
-import { parseClaim } from './parser.ts';
 import { scopeOf } from './study.ts';
 
 export type ParsedStatement =

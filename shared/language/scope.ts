@@ -38,6 +38,12 @@ export const NATURAL_NAMES: readonly string[] = [
   ...NATURAL_CONSTANTS.map(({ name }) => name),
 ];
 
+/** Names that nothing else can have, running variables included. */
+export const FIXED_NAMES: readonly string[] = [
+  'pi',
+  ...NATURAL_CONSTANTS.filter(({ isReplaceable }) => !isReplaceable).map(({ name }) => name),
+];
+
 /**
  * The way out for an unknown name: the nearest known one, or the product that was written without
  * spaces (`kT`).
@@ -76,7 +82,7 @@ function takenApart(name: string, known: ReadonlySet<string>): string[] | undefi
     const head = name.slice(0, i);
     if (!known.has(head)) continue;
     const rest = name.slice(i);
-    if (known.has(rest)) return [head, rest];
+    if (known.has(rest) && rest !== head) return [head, rest];
     for (let j = 1; j < rest.length; j++) {
       if (known.has(rest.slice(0, j)) && known.has(rest.slice(j))) {
         return [head, rest.slice(0, j), rest.slice(j)];

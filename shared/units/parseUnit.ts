@@ -162,7 +162,7 @@ class Reader {
     if (/^°C$|^degC$|^°F$/.test(piece.text)) {
       this.refuse(piece, `${piece.text} is a unit of data only.`, 'Write temperatures in K.', 'K');
     }
-    const meant = nearest(piece.text, USUAL_UNITS);
+    const meant = takenApart(piece.text) ?? nearest(piece.text, USUAL_UNITS);
     const hint = meant
       ? `Did you mean ${meant}?`
       : 'Units are SI symbols with their prefixes, and u, eV, Å, bar, atm, cal, L, D, min, h.';
@@ -219,6 +219,15 @@ class Reader {
       ...(replacement === undefined ? {} : { replacement }),
     });
   }
+}
+
+/** `Jm` as `J m`. */
+function takenApart(name: string): string | undefined {
+  for (let i = 1; i < name.length && name.length <= 12; i++) {
+    const [head, rest] = [name.slice(0, i), name.slice(i)];
+    if (unitNamed(head) && unitNamed(rest)) return `${head} ${rest}`;
+  }
+  return undefined;
 }
 
 const known = new Map<string, UnitResult>();
