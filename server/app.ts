@@ -126,7 +126,7 @@ export function createApp(config: Config, dependencies: Dependencies): Express {
     storableText,
     ...signedIn,
     csrf(config.publicUrl),
-    sessionRoutes({ config, database, mailer, passport }),
+    sessionRoutes({ config, database, redis, mailer, passport }),
     groupRoutes(database),
     modelRoutes(database),
     eventRoutes(database, hub),

@@ -21,7 +21,7 @@ const schema = z.object({
   SMTP_URL: z.string().optional(),
   MAIL_FROM: z.string().default('Massieu <massieu@localhost>'),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
-  /** Sign-ins, registrations and resets from one address within a quarter of an hour. */
+  /** Failed sign-ins, and likewise registrations and resets, within a quarter of an hour. */
   SIGN_IN_ATTEMPTS: z.coerce.number().int().min(1).default(20),
   /** How many proxies stand in front and may say who the client is. */
   TRUSTED_PROXIES: z.coerce.number().int().min(0).default(0),

@@ -1,5 +1,6 @@
 /** Signing in and out, registering, passwords. */
 import { Router, type Request, type Response } from 'express';
+import type { Redis } from 'ioredis';
 import type { PassportStatic } from 'passport';
 import {
   emailConfirmationSchema,
@@ -14,7 +15,7 @@ import type { Database } from '../database.ts';
 import { Fault } from '../fault.ts';
 import type { Mailer } from '../mail/mailer.ts';
 import { csrfToken } from '../middleware/csrf.ts';
-import { signInLimits } from '../middleware/rateLimits.ts';
+import { createRateLimits } from '../middleware/rateLimits.ts';
 import type { PersonRow } from '../models/person.ts';
 import { requestReset, resetPassword } from '../services/accounts.ts';
 import { listGroups } from '../services/groups.ts';
@@ -23,6 +24,7 @@ import { confirmEmail, register } from '../services/registrations.ts';
 export interface SessionDependencies {
   readonly config: Config;
   readonly database: Database;
+  readonly redis: Redis;
   readonly mailer: Mailer;
   readonly passport: PassportStatic;
 }
@@ -51,15 +53,15 @@ function signIn(request: Request, person: PersonRow): Promise<void> {
 }
 
 export function sessionRoutes(dependencies: SessionDependencies): Router {
-  const { config, database, mailer, passport } = dependencies;
+  const { config, database, redis, mailer, passport } = dependencies;
   const router = Router();
-  const limits = signInLimits(config);
+  const limits = createRateLimits(config, redis);
 
   router.get('/session', async (request, response) => {
     response.json(await describe(request, dependencies));
   });
 
-  router.post('/session', ...limits, async (request: Request, response: Response) => {
+  router.post('/session', ...limits.signIn, async (request: Request, response: Response) => {
     request.body = signInSchema.parse(request.body);
     const person = await new Promise<PersonRow>((resolve, reject) => {
       const verify = passport.authenticate(
@@ -86,20 +88,20 @@ export function sessionRoutes(dependencies: SessionDependencies): Router {
     });
   });
 
-  router.post('/registrations', ...limits, async (request, response) => {
+  router.post('/registrations', ...limits.letters, async (request, response) => {
     const registration = registrationSchema.parse(request.body);
     mailer.requireMail();
     mailer.post(await register(database, config.publicUrl, registration));
     response.status(202).json({});
   });
 
-  router.post('/email-confirmations', async (request, response) => {
+  router.post('/email-confirmations', ...limits.links, async (request, response) => {
     const { token } = emailConfirmationSchema.parse(request.body);
     await confirmEmail(database, token);
     response.status(204).end();
   });
 
-  router.post('/password-resets', ...limits, async (request, response) => {
+  router.post('/password-resets', ...limits.letters, async (request, response) => {
     const { email } = passwordResetRequestSchema.parse(request.body);
     mailer.requireMail();
     const letter = await requestReset(database, config.publicUrl, email);
@@ -107,7 +109,7 @@ export function sessionRoutes(dependencies: SessionDependencies): Router {
     response.status(202).json({});
   });
 
-  router.put('/password-resets/:token', ...limits, async (request, response) => {
+  router.put('/password-resets/:token', ...limits.links, async (request, response) => {
     const { password } = passwordResetSchema.parse(request.body);
     await resetPassword(database, String(request.params['token']), password);
     response.status(204).end();

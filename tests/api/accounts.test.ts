@@ -188,6 +188,19 @@ describe('attempts', () => {
       const { body, headers } = await attempt().expect(429);
       expect(body.type).toBe('urn:massieu:problem:too-many-requests');
       expect(headers['retry-after']).toMatch(/^\d+$/);
+      // The client is out of attempts, whatever account it tries.
+      const person = await createPerson(strict, 'Jon Limit');
+      await browser.post('/api/session', { email: person.email, password: PASSWORD }).expect(429);
+    } finally {
+      await strict.close();
+    }
+  });
+
+  it('that succeed do not use the limit up', async () => {
+    const strict = await openSite({ SIGN_IN_ATTEMPTS: '3' });
+    try {
+      const person = await createPerson(strict, 'Kim Often');
+      for (let i = 0; i < 6; i++) await signIn(strict, person);
     } finally {
       await strict.close();
     }

@@ -65,7 +65,7 @@ export async function openSite(settings: Readonly<Record<string, string>> = {}):
       await hub.close();
       await sessions.close();
       await queue.close();
-      const keys = await redis.keys(`bull:${config.QUEUE_NAME}:*`);
+      const keys = await redis.keys(`*${config.QUEUE_NAME}:*`);
       if (keys.length > 0) await redis.del(...keys);
       await redis.quit();
       await database.close();

@@ -24,7 +24,7 @@ function ended(child: ChildProcess): Promise<number | null> {
 
 /** Starts a worker of the site. `settings` are added to its environment. */
 export function startWorker(
-  site: Site,
+  site: Pick<Site, 'environment'>,
   settings: Readonly<Record<string, string>> = {},
 ): TestWorker {
   const child = spawn(process.execPath, ['--import', 'tsx', join(ROOT, 'worker/main.ts')], {
