@@ -6,15 +6,20 @@ import { csrfToken } from '../middleware/csrf.ts';
 
 /** A path of our own pages; anything that could lead elsewhere becomes the desk. */
 export function localPath(next: unknown, publicUrl: string): string {
-  if (typeof next !== 'string' || !/^\/(?![/\\])/.test(next)) return '/desk';
+  if (typeof next !== 'string' || !isLocal(next)) return '/desk';
   try {
     const url = new URL(next, publicUrl);
-    return url.origin === new URL(publicUrl).origin
-      ? url.pathname + url.search + url.hash
-      : '/desk';
+    // Dots are resolved by now: `/.//elsewhere.example` has become `//elsewhere.example`.
+    const path = url.pathname + url.search + url.hash;
+    return url.origin === new URL(publicUrl).origin && isLocal(path) ? path : '/desk';
   } catch {
     return '/desk';
   }
+}
+
+/** A path that begins with two strokes names another host; browsers take a backslash for one. */
+function isLocal(path: string): boolean {
+  return /^\/(?![/\\])/.test(path);
 }
 
 export function identityRoutes(config: Config, passport: PassportStatic): Router {
