@@ -82,12 +82,12 @@ export function createApp(config: Config, dependencies: Dependencies): Express {
         response.setHeader('x-request-id', id);
         return id;
       },
-      customLogLevel: (_request, response, error) =>
-        error || response.statusCode >= 500
-          ? 'error'
-          : response.statusCode >= 400
-            ? 'warn'
-            : 'debug',
+      customLogLevel: (_request, response, error) => {
+        if (error || response.statusCode >= 500) return 'error';
+        return response.statusCode >= 400 ? 'warn' : 'info';
+      },
+      // Asked for all the time, by machines and by every page.
+      autoLogging: { ignore: ({ url = '' }) => /^\/(healthz|readyz|assets\/)/.test(url) },
       serializers: {
         req: (request: { method: string; url: string; id: unknown }) => ({
           id: request.id,

@@ -1,13 +1,13 @@
 /** The structured log of a process; secrets never reach it. */
-import { pino, type Logger } from 'pino';
+import { pino, type Logger, type LoggerOptions } from 'pino';
 import type { Config } from './config.ts';
 
 export type { Logger };
 
-export function createLog(config: Pick<Config, 'LOG_LEVEL'>, name: string): Logger {
-  return pino({
+export function logOptions(level: string, name: string): LoggerOptions {
+  return {
     name,
-    level: config.LOG_LEVEL,
+    level,
     redact: {
       paths: [
         'req.headers.cookie',
@@ -19,5 +19,9 @@ export function createLog(config: Pick<Config, 'LOG_LEVEL'>, name: string): Logg
       ],
       censor: '[withheld]',
     },
-  });
+  };
+}
+
+export function createLog(config: Pick<Config, 'LOG_LEVEL'>, name: string): Logger {
+  return pino(logOptions(config.LOG_LEVEL, name));
 }

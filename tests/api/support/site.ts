@@ -2,7 +2,7 @@
 import { randomBytes } from 'node:crypto';
 import type { Express } from 'express';
 import type { Redis } from 'ioredis';
-import { createApp } from '../../../server/app.ts';
+import { createApp, type Dependencies } from '../../../server/app.ts';
 import { readConfig, type Config } from '../../../server/config.ts';
 import { openDatabase, type Database } from '../../../server/database.ts';
 import { createLog } from '../../../server/log.ts';
@@ -20,6 +20,8 @@ export interface Site {
   readonly redis: Redis;
   readonly queue: ReturnType<typeof openDerivationQueue>;
   readonly app: Express;
+  /** What the application was made of, to make another one on the same data. */
+  readonly dependencies: Dependencies;
   readonly letters: readonly Letter[];
   close(): Promise<void>;
 }
@@ -52,7 +54,10 @@ export async function openSite(settings: Readonly<Record<string, string>> = {}):
   };
   const sessions = openSessionStore(config.DATABASE_URL, log);
   const sessionStore = sessions.store;
-  const app = createApp(config, { database, redis, queue, sessionStore, mailer, hub, log });
+  // express-session listens to the store for every application that is made on it.
+  sessionStore.setMaxListeners(50);
+  const dependencies = { database, redis, queue, sessionStore, mailer, hub, log };
+  const app = createApp(config, dependencies);
   return {
     config,
     environment,
@@ -60,6 +65,7 @@ export async function openSite(settings: Readonly<Record<string, string>> = {}):
     redis,
     queue,
     app,
+    dependencies,
     letters,
     async close() {
       await hub.close();
