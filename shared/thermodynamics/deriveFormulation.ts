@@ -24,6 +24,11 @@ import { trailOf } from './trail.ts';
 export interface DeriveOptions {
   /** Called with what is being done and the fraction done, from 0 to 1. */
   readonly onProgress?: (stage: string, fraction: number) => void;
+  /**
+   * Formulas and claims alone, without forms, contributions, trails and notes: what is shown while
+   * somebody types.
+   */
+  readonly isBrief?: boolean;
   /** Only these properties, by symbol; all without it. */
   readonly properties?: readonly string[];
 }
@@ -118,18 +123,13 @@ export function deriveFormulation(
 function assemble(
   model: Model,
   lineOf: (position: number) => number,
-  { onProgress, properties: wanted }: DeriveOptions,
+  { onProgress, properties: wanted, isBrief = false }: DeriveOptions,
   enter: (stage: string) => void,
 ): Derivation {
   const { formulation, surroundings } = model;
   const notation = createNotation(formulation);
   const calculator = createCalculator(model);
-  const isExtensive = model.isExtensive();
-  const forms = isExtensive ? formsOf(model) : [];
-  const groups = groupTerms(formulation, surroundings, notation).map(({ label, f }) => ({
-    label,
-    share: createModel(formulation, { f, surroundings, shorten: (e) => e }),
-  }));
+  const about = isBrief ? undefined : aboutProperties(model, notation);
 
   const chosen = model.entries.filter(({ symbol: s }) => !wanted || wanted.includes(s));
   const properties: DerivedProperty[] = [];
@@ -138,7 +138,7 @@ function assemble(
     enter(entry.symbol);
     onProgress?.(`deriving ${entry.symbol}`, (0.9 * i) / chosen.length);
     try {
-      properties.push(deriveProperty(model, entry, groups, forms, notation));
+      properties.push(deriveProperty(model, entry, about, notation));
     } catch (fault) {
       if (fault instanceof NoSuchDerivative) {
         absent.push({ symbol: entry.symbol, reason: fault.message });
@@ -198,11 +198,27 @@ interface Group {
   readonly share: Model;
 }
 
+/** What stands beside the formulas, made once for all of them. */
+interface About {
+  readonly forms: readonly Form[];
+  readonly groups: readonly Group[];
+}
+
+function aboutProperties(model: Model, notation: Notation): About {
+  const { formulation, surroundings } = model;
+  return {
+    forms: model.isExtensive() ? formsOf(model) : [],
+    groups: groupTerms(formulation, surroundings, notation).map(({ label, f }) => ({
+      label,
+      share: createModel(formulation, { f, surroundings, shorten: (e) => e }),
+    })),
+  };
+}
+
 function deriveProperty(
   model: Model,
   entry: Entry,
-  groups: readonly Group[],
-  forms: readonly Form[],
+  about: About | undefined,
   notation: Notation,
 ): DerivedProperty {
   const { value } = model.worked(entry.symbol);
@@ -216,10 +232,11 @@ function deriveProperty(
     tex: notation.tex(value),
     text: notation.text(value),
     tree: notation.json(value),
-    forms: forms.map((form) => formOf(entry, value, form, notation)),
-    contributions: entry.isLinear ? contributionsTo(model, entry, groups, notation) : [],
-    steps: trailOf(model, entry, notation),
-    notes: notesOf(model, entry, value, notation),
+    forms: about ? about.forms.map((form) => formOf(entry, value, form, notation)) : [],
+    contributions:
+      about && entry.isLinear ? contributionsTo(model, entry, about.groups, notation) : [],
+    steps: about ? trailOf(model, entry, notation) : [],
+    notes: about ? notesOf(model, entry, value, notation) : [],
   };
 }
 

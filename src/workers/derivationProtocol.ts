@@ -6,6 +6,8 @@ export interface DerivationRequest {
   /** Counts up; an answer names the request that it belongs to. */
   readonly id: number;
   readonly source: string;
+  /** Only these properties, and only their formulas; without it everything. */
+  readonly brief?: readonly string[];
 }
 
 export interface DerivationResponse {

@@ -4,7 +4,10 @@ import type { DerivationRequest, DerivationResponse } from './derivationProtocol
 
 self.addEventListener('message', ({ data }: MessageEvent<DerivationRequest>) => {
   const start = performance.now();
-  const { diagnostics, derivation } = derive(data.source);
+  const { diagnostics, derivation } = derive(
+    data.source,
+    data.brief ? { properties: data.brief, isBrief: true } : {},
+  );
   const response: DerivationResponse = {
     id: data.id,
     diagnostics,

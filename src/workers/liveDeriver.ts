@@ -37,10 +37,13 @@ export class LiveDeriver {
   #serial = 0;
   readonly #create: () => DerivationWorker;
   readonly #listener: Listener;
+  readonly #brief: readonly string[] | undefined;
 
-  constructor(create: () => DerivationWorker, listener: Listener) {
+  /** With `brief` only these properties are derived, and only their formulas. */
+  constructor(create: () => DerivationWorker, listener: Listener, brief?: readonly string[]) {
     this.#create = create;
     this.#listener = listener;
+    this.#brief = brief;
   }
 
   /** Derives the source as soon as the worker is free. */
@@ -66,7 +69,11 @@ export class LiveDeriver {
     this.#worker ??= this.#open();
     this.#serial += 1;
     this.#running = { id: this.#serial, source, startedAt: performance.now() };
-    this.#worker.postMessage({ id: this.#serial, source });
+    this.#worker.postMessage({
+      id: this.#serial,
+      source,
+      ...(this.#brief ? { brief: this.#brief } : {}),
+    });
     this.#watch();
   }
 

@@ -8,10 +8,9 @@ import {
   SmallHeading,
   classes,
 } from '../../components/index.ts';
+import { CONSEQUENCES } from './consequences.ts';
 import type { LiveDerivation } from '../../workers/useLiveDerivation.ts';
 
-/** The margin shows the first few; the Properties section has all. */
-const SHOWN = ['p', 'U', 'S', 'A', 'mu', 'C_V', 'C_p', 'N', 'Z'];
 const MOST_SHOWN = 7;
 const OUTCOME = { passed: 'holds', failed: 'does not hold', undecided: 'not decided' } as const;
 
@@ -20,8 +19,8 @@ export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) 
   const faults = diagnostics.filter(({ severity }) => severity === 'error');
   const remarks = diagnostics.filter(({ severity }) => severity !== 'error');
   const shown = (derivation?.properties ?? [])
-    .filter(({ symbol }) => SHOWN.includes(symbol))
-    .sort((a, b) => SHOWN.indexOf(a.symbol) - SHOWN.indexOf(b.symbol))
+    .filter(({ symbol }) => CONSEQUENCES.includes(symbol))
+    .sort((a, b) => CONSEQUENCES.indexOf(a.symbol) - CONSEQUENCES.indexOf(b.symbol))
     .slice(0, MOST_SHOWN);
   const lines = source === undefined ? 0 : source.trimEnd().split('\n').length;
   const aside =

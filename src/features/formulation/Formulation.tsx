@@ -17,6 +17,7 @@ import {
 import { useModelContext } from '../../routes/model/modelContext.ts';
 import { useLiveDerivation } from '../../workers/useLiveDerivation.ts';
 import { ConsequencesMargin } from './ConsequencesMargin.tsx';
+import { CONSEQUENCES } from './consequences.ts';
 import { DraftConflict } from './DraftConflict.tsx';
 import { DraftStatusLine } from './DraftStatusLine.tsx';
 import { FormulationEditor } from './FormulationEditor.tsx';
@@ -36,7 +37,7 @@ export function Formulation() {
 function Desk({ draft }: { readonly draft: Draft }) {
   const { model } = useModelContext();
   const [{ text, status }, keeper] = useDraftKeeper(model.id, draft);
-  const live = useLiveDerivation(text);
+  const live = useLiveDerivation(text, CONSEQUENCES);
   const diagnostics = useDeferredValue(live.source === text ? live.diagnostics : []);
   const [isFreezing, setIsFreezing] = useState(false);
   const number = (model.latestVersion?.number ?? 0) + 1;

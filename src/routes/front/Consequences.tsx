@@ -3,8 +3,8 @@ import type { Derivation } from '../../../shared/contracts/derivation.ts';
 import { ScrollingFormula } from '../../components/Formula.tsx';
 import { SealMark } from '../../components/Seal.tsx';
 import { classes } from '../../components/classes.ts';
+import { SPECIMEN_PROPERTIES } from './specimenSource.ts';
 
-const SHOWN = ['p', 'U', 'S', 'C_V', 'C_p'];
 const OUTCOME = { passed: 'holds', failed: 'does not hold', undecided: 'not decided' } as const;
 
 export function Consequences({
@@ -14,7 +14,7 @@ export function Consequences({
   readonly derivation: Derivation;
   readonly isStale: boolean;
 }) {
-  const shown = SHOWN.flatMap((symbol) =>
+  const shown = SPECIMEN_PROPERTIES.flatMap((symbol) =>
     derivation.properties.filter((property) => property.symbol === symbol),
   );
   return (

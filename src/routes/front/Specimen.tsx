@@ -3,7 +3,7 @@ import { lazy, Suspense, useEffect, useState } from 'react';
 import { useLiveDerivation } from '../../workers/useLiveDerivation.ts';
 import { Consequences } from './Consequences.tsx';
 import { SpecimenEditor } from './SpecimenEditor.tsx';
-import { SPECIMEN } from './specimenSource.ts';
+import { SPECIMEN, SPECIMEN_PROPERTIES } from './specimenSource.ts';
 import { loadTypesetting } from '../../components/Formula.tsx';
 import { QuietButton } from '../../components/Button.tsx';
 
@@ -12,7 +12,10 @@ const Isotherms = lazy(async () => ({ default: (await import('./Isotherms.tsx'))
 
 export function Specimen() {
   const [source, setSource] = useState(SPECIMEN);
-  const { derivation, diagnostics, failure, isStale, milliseconds } = useLiveDerivation(source);
+  const { derivation, diagnostics, failure, isStale, milliseconds } = useLiveDerivation(
+    source,
+    SPECIMEN_PROPERTIES,
+  );
   const firstFault = diagnostics.find(({ severity }) => severity === 'error');
   useEffect(() => void loadTypesetting(), []);
 

@@ -10,3 +10,6 @@ let Λ = h / sqrt(2 π m k T)
 q = (V - N b) / Λ^3 * exp(a N / (V k T))
 Q = q^N / N!
 claim "ideal when dilute"  p V / (N k T) -> 1  as V -> inf`;
+
+/** The properties that the specimen shows; only these are derived while one types. */
+export const SPECIMEN_PROPERTIES: readonly string[] = ['p', 'U', 'S', 'C_V', 'C_p'];
