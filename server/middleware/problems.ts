@@ -26,7 +26,10 @@ function asFault(error: unknown): Fault {
   }
   const status = (error as { status?: unknown }).status;
   if (status === 413) return new Fault('payload-too-large', 'Send at most 512 KiB at once.');
-  if (status === 400) return new Fault('validation', 'The body of the request is no valid JSON.');
+  // A body, or an address, that cannot be read at all.
+  if (typeof status === 'number' && status >= 400 && status < 500) {
+    return new Fault('validation', 'The request cannot be read. Send JSON in UTF-8.');
+  }
   return new Fault(
     'internal',
     'The fault is ours and has been recorded. Try again; if it stays, tell the site administrator the request id.',

@@ -5,10 +5,16 @@ import { Fault } from '../fault.ts';
 /** The null character, and halves of surrogate pairs, which UTF-8 has no bytes for. */
 const UNSTORABLE = /[\0\p{Surrogate}]/u;
 
-function holdsUnstorable(value: unknown): boolean {
-  if (typeof value === 'string') return UNSTORABLE.test(value);
-  if (typeof value !== 'object' || value === null) return false;
-  return Object.values(value).some(holdsUnstorable);
+/** Goes through the body without recursion: it may be nested as deeply as it is long. */
+function holdsUnstorable(body: unknown): boolean {
+  const waiting: unknown[] = [body];
+  while (waiting.length > 0) {
+    const value = waiting.pop();
+    if (typeof value === 'string' && UNSTORABLE.test(value)) return true;
+    if (typeof value !== 'object' || value === null) continue;
+    for (const part of Object.values(value)) waiting.push(part);
+  }
+  return false;
 }
 
 export const storableText: RequestHandler = (request, _response, next) => {
