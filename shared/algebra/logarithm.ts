@@ -107,7 +107,9 @@ function shortestGathering(
   const magnitudes = group.map(({ coefficient }) =>
     Q.sign(coefficient) < 0 ? Q.negate(coefficient) : coefficient,
   );
-  const outside = [magnitudes.reduce((a, b) => Q.contentGcd(a, b)), ...magnitudes];
+  const common = magnitudes.reduce((a, b) => Q.contentGcd(a, b));
+  // Each different number once: with seven logarithms there are seven magnitudes, mostly equal.
+  const outside = new Map([common, ...magnitudes].map((r) => [Q.toText(r), r])).values();
   let best = sum(
     group.map(({ argument, coefficient }) =>
       product([number(coefficient), cofactor, ln(argument)]),

@@ -75,13 +75,14 @@ export class Simplifier {
     const { workspace } = this;
     const addends = addendsOf(sum(addendsOf(distribute(e)).map(distribute)));
     if (addends.length < 2) return undefined;
-    const terms: Term[] = [];
+    const single: Term[] = [];
     for (const addend of addends) {
       const factored = workspace.factored(addend);
       if (Q.isZero(factored.coefficient)) continue;
-      terms.push({ factored, written: shortest([addend, workspace.write(factored)]) });
+      single.push({ factored, written: shortest([addend, workspace.write(factored)]) });
     }
-    const asDerived = gatherLogarithms(sum(terms.map(({ written }) => written)));
+    const terms = this.gatherAtOnce(single);
+    const asDerived = gatherLogarithms(sum(single.map(({ written }) => written)));
     if (terms.length > MOST_PAIRED_TERMS) return asDerived;
     // A pair is tried once: what it gives does not depend on the other terms.
     const tried = new Map<Term, Map<Term, Merger | undefined>>();
@@ -106,6 +107,29 @@ export class Simplifier {
       terms.splice(best.j, 1);
     }
     return shortest([asDerived, gatherLogarithms(sum(terms.map(({ written }) => written)))]);
+  }
+
+  /**
+   * Terms that differ only in their logarithms put together in one step. Pair by pair it would be
+   * the same in the end, with a sum of logarithms factored for every pair.
+   */
+  private gatherAtOnce(terms: readonly Term[]): Term[] {
+    const groups = new Map<string, { hasLogarithm: boolean; members: Term[] }>();
+    for (const term of terms) {
+      const { key, hasLogarithm } = this.workspace.cofactorOf(term.factored);
+      const group = groups.get(key) ?? { hasLogarithm: false, members: [] };
+      group.hasLogarithm ||= hasLogarithm;
+      group.members.push(term);
+      groups.set(key, group);
+    }
+    return [...groups.values()].flatMap(({ hasLogarithm, members }) => {
+      if (!hasLogarithm || members.length < 2) return members;
+      const factored = this.workspace.add(members.map((member) => member.factored));
+      if (Q.isZero(factored.coefficient)) return [];
+      const written = this.workspace.write(factored);
+      const apart = readingCost(sum(members.map((member) => member.written)));
+      return readingCost(written) < apart ? [{ factored, written }] : members;
+    });
   }
 
   /** Two terms as one, and what that saves; undefined where it is not worth a trial. */

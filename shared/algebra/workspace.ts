@@ -266,6 +266,19 @@ export class Workspace {
     return multiplyFactored(outside, this.addRemainders(remainders));
   }
 
+  /** What a term is besides its logarithms: terms with one cofactor may have one logarithm. */
+  cofactorOf(term: Factored): { readonly key: string; readonly hasLogarithm: boolean } {
+    const logarithms = [...term.exponents.keys()].filter((index) => {
+      const { expression } = this.bases.baseAt(index);
+      return expression.kind === 'call' && expression.name === 'ln';
+    });
+    const taken = new Map(logarithms.map((index) => [index, term.exponents.get(index) ?? Q.ZERO]));
+    return {
+      key: baseKey(withoutExponents(term, taken)),
+      hasLogarithm: logarithms.length > 0,
+    };
+  }
+
   /** How many terms the common numerator has before anything cancels. */
   sizeOfSum(terms: readonly Factored[]): number {
     const common = commonExponents(terms);
