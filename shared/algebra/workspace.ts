@@ -236,8 +236,15 @@ export class Workspace {
       Q.sign(inner.coefficient) > 0 &&
       (unknown.length === 0 || (unknown.length === 1 && single && Q.isOne(single[1])));
     if (!mayDistribute) {
-      const written = this.write(inner);
-      return factoredBase(this.bases.kernel(written === zero ? base : written), exponent);
+      if (Q.isZero(inner.coefficient)) return factoredBase(this.bases.kernel(base), exponent);
+      // 1/√(x/y) is √(y/x): no fraction below a fraction.
+      const isQuotient = [...inner.exponents.values()].some((e) => Q.sign(e) < 0);
+      return Q.sign(exponent) < 0 && isQuotient
+        ? factoredBase(
+            this.bases.kernel(this.write(raiseFactored(inner, Q.MINUS_ONE))),
+            Q.negate(exponent),
+          )
+        : factoredBase(this.bases.kernel(this.write(inner)), exponent);
     }
     const radical = power(number(inner.coefficient), number(exponent));
     const { coefficient, rest } = splitCoefficient(radical);
