@@ -46,7 +46,9 @@ export class ConfigFault extends Error {
 
 /** Reads the settings. Throws ConfigFault naming every setting at fault. */
 export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config {
-  const parsed = schema.safeParse(environment);
+  // A setting that is there but empty counts as not set.
+  const settings = Object.entries(environment).filter(([, value]) => value !== '');
+  const parsed = schema.safeParse(Object.fromEntries(settings));
   if (!parsed.success) {
     const lines = parsed.error.issues.map(({ path, message }) => `  ${path.join('.')}: ${message}`);
     throw new ConfigFault(
@@ -55,5 +57,6 @@ export function readConfig(environment: NodeJS.ProcessEnv = process.env): Config
     );
   }
   const config = parsed.data;
-  return { ...config, publicUrl: config.PUBLIC_URL ?? `http://${config.HOST}:${config.PORT}` };
+  const publicUrl = config.PUBLIC_URL ?? `http://${config.HOST}:${config.PORT}`;
+  return { ...config, publicUrl: publicUrl.replace(/\/+$/, '') };
 }

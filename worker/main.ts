@@ -10,10 +10,12 @@ import {
   type DerivationJob,
 } from '../server/queue/derivationQueue.ts';
 import { openOutboxRelay } from '../server/queue/outboxRelay.ts';
+import { clearAway } from './clearAway.ts';
 import { giveUp, processDerivation, WorkerEnds } from './processDerivation.ts';
 import { sweepLost } from './sweepLost.ts';
 
 const SWEEP_EVERY_MS = 15_000;
+const CLEAR_EVERY_MS = 3_600_000;
 
 async function main(): Promise<void> {
   const config = readConfig();
@@ -74,11 +76,17 @@ async function main(): Promise<void> {
       },
     );
   }, SWEEP_EVERY_MS);
+  const clearing = setInterval(() => {
+    clearAway(database).catch((error: unknown) => {
+      log.warn({ err: error }, 'old rows could not be cleared away');
+    });
+  }, CLEAR_EVERY_MS);
   log.info({ concurrency: config.WORKER_CONCURRENCY }, 'working');
 
   const end = (): void => {
     log.info('ending');
     clearInterval(sweeper);
+    clearInterval(clearing);
     shutdown.abort();
     void Promise.allSettled([relay.close(), worker.close()])
       .then(() => Promise.allSettled([queue.close(), database.close()]))

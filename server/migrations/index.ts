@@ -9,6 +9,7 @@ import { orderOfEvents } from './0005-order-of-events.ts';
 import { lastEditor } from './0006-last-editor.ts';
 import { keptTexts } from './0007-kept-texts.ts';
 import { standingResults } from './0008-standing-results.ts';
+import { seeds } from './0009-seeds.ts';
 import type { Migration } from './migration.ts';
 
 export const MIGRATIONS: readonly Migration[] = [
@@ -20,6 +21,7 @@ export const MIGRATIONS: readonly Migration[] = [
   lastEditor,
   keptTexts,
   standingResults,
+  seeds,
 ];
 
 /** Names of the migrations done, in a table of the database itself. */

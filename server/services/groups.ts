@@ -288,7 +288,12 @@ export async function readDesk(database: Database, personId: string): Promise<De
     attributes: { exclude: ['source', 'normalizedSource'] },
     include: [
       'frozenBy',
-      'model',
+      {
+        association: 'model',
+        required: true,
+        // Somebody who has left a group sees nothing of it, not even what he did there.
+        include: [{ association: 'notebook', required: true, where: { groupId: groupIds } }],
+      },
       {
         association: 'derivation',
         required: true,

@@ -112,6 +112,19 @@ describe('what one sees of others', () => {
     expect(desk.body).toEqual({ recentModels: [], jobs: [], events: [], groups: [] });
   });
 
+  it('is nothing any more of a group that one has left', async () => {
+    const { browser, groupId, modelId } = await openDeskOfEditor(site, IDEAL_GAS);
+    const person = await createPerson(site, 'Gone Modeler');
+    await join(site, person, groupId, 'modeler');
+    const gone = await signIn(site, person);
+    await gone.post(`/api/models/${modelId}/versions`, { revision: 0 }).expect(201);
+    expect((await gone.get('/api/desk')).body.jobs).toHaveLength(1);
+    await site.database.models.Membership.destroy({ where: { personId: person.id, groupId } });
+    const desk = await gone.get('/api/desk').expect(200);
+    expect(desk.body).toEqual({ recentModels: [], jobs: [], events: [], groups: [] });
+    await browser.get(`/api/models/${modelId}`).expect(200);
+  });
+
   it('answers the same for what is hidden and for what does not exist', async () => {
     const outsider = browsers.get('outsider') as Browser;
     const hidden = await outsider.get(`/api/models/${places['model'] ?? ''}`).expect(404);
