@@ -1,25 +1,28 @@
 /**
- * Expressions compiled to a tape: a flat list of instructions over numbered registers, run by one
- * loop. Equal parts are computed once, numbers are folded beforehand, and no text ever becomes code,
- * so that it runs under a content security policy without eval.
+ * Expressions compiled to a tape. Equal parts are computed once, numbers are folded beforehand, and
+ * in sums and integrals what does not depend on the running variable is computed outside.
  *
  *     p = N k T/(V − N b)  →  r4 = N·b;  r5 = V − r4;  r6 = N·k·T;  r7 = r6/r5
  */
-import { splitPower } from '../algebra/construct.ts';
-import type { Expression, Relation } from '../algebra/expression.ts';
+import { one, product, splitPower, sum } from '../algebra/construct.ts';
+import type { Expression } from '../algebra/expression.ts';
 import * as Q from '../algebra/rational.ts';
+import { symbolsOf } from '../algebra/traverse.ts';
+import { breakpointsOf } from './breakpoints.ts';
+import { BINARY, UNARY } from './elementary.ts';
 import {
-  besselI,
-  debyeFunction,
-  digamma,
-  erf,
-  gamma,
-  lnGamma,
-  polygamma,
-  polylogarithm,
-} from './special/index.ts';
-import { integrate } from './quadrature.ts';
-import { sumSeries } from './sumSeries.ts';
+  asLargeExponential,
+  exponentialAndOne,
+  lnOfLargeExponential,
+  splitExponentials,
+  type LargeExponential,
+} from './largeExponentials.ts';
+import { holdsInfinity } from './infinitePotential.ts';
+import { integratePieces, isSettled } from './quadrature.ts';
+import { relationHolds } from './relation.ts';
+import { multiplySeries, sumSeries } from './sumSeries.ts';
+import { lnGamma } from './special/index.ts';
+import { TapeBuilder, type Tape } from './tape.ts';
 
 /** Values of all outputs for values of all inputs, in the order in which they were given. */
 export interface Compiled {
@@ -39,136 +42,70 @@ export interface Compiled {
   readonly instructionCount: number;
 }
 
-type Unary = (x: number) => number;
-type Binary = (x: number, y: number) => number;
+type Binding = Extract<Expression, { kind: 'summation' | 'productOver' | 'integral' }>;
+type ProductNode = Extract<Expression, { kind: 'product' | 'power' }>;
 
-type Instruction =
-  | {
-      readonly op: 'add' | 'multiply' | 'divide' | 'subtract';
-      readonly a: number;
-      readonly b: number;
-    }
-  | { readonly op: 'whole power'; readonly a: number; readonly n: number }
-  | { readonly op: 'unary'; readonly a: number; readonly f: Unary }
-  | { readonly op: 'binary'; readonly a: number; readonly b: number; readonly f: Binary }
-  | { readonly op: 'special'; readonly f: (inputs: ArrayLike<number>) => number };
+/** Whole powers up to this size are multiplied out. */
+const LARGEST_WHOLE_POWER = 64;
 
-const UNARY: Readonly<Record<string, Unary>> = {
-  exp: Math.exp,
-  ln: Math.log,
-  log10: Math.log10,
-  sinh: Math.sinh,
-  cosh: Math.cosh,
-  tanh: Math.tanh,
-  coth: (x) => 1 / Math.tanh(x),
-  sin: Math.sin,
-  cos: Math.cos,
-  tan: Math.tan,
-  arcsinh: Math.asinh,
-  arctanh: Math.atanh,
-  erf,
-  Gamma: gamma,
-  lnGamma,
-  digamma,
-  factorial: (x) => gamma(x + 1),
-  abs: Math.abs,
-  heaviside: (x) => (x >= 0 ? 1 : 0),
-};
-
-const BINARY: Readonly<Record<string, Binary>> = {
-  polygamma,
-  polylog: polylogarithm,
-  besselI,
-  debye: debyeFunction,
-  binomial: (n, k) => Math.exp(lnGamma(n + 1) - lnGamma(k + 1) - lnGamma(n - k + 1)),
-  min: Math.min,
-  max: Math.max,
-};
-
-/** ln(1 − e^u) without loss near u = 0 (M. Mächler, 2012). */
-function lnOneMinusExp(u: number): number {
-  return u > -Math.LN2 ? Math.log(-Math.expm1(u)) : Math.log1p(-Math.exp(u));
-}
-
-function wholePower(x: number, n: number): number {
-  if (n < 0) return 1 / wholePower(x, -n);
-  let result = 1;
-  let square = x;
-  for (let rest = n; rest > 0; rest >>= 1) {
-    if (rest & 1) result *= square;
-    square *= square;
-  }
-  return result;
-}
+/** An integral whose error may exceed this part of its value has no value. */
+const WORST_RELATIVE_ERROR = 1e-7;
 
 class Compiler {
-  readonly inputs: readonly string[];
-  readonly instructions: Instruction[] = [];
-  /** Registers: the inputs, then the constants and results in the order in which they came up. */
-  readonly initial: number[];
-  /** The register that each instruction writes. */
-  readonly targets: number[] = [];
+  readonly tape: TapeBuilder;
+  /** Expressions of the surrounding compiler that stand as inputs here, with their registers. */
+  readonly captured = new Map<Expression, number>();
+  private readonly inputs: readonly string[];
+  private readonly outer: Compiler | undefined;
   private readonly registerOf = new Map<Expression, number>();
-  private readonly constants = new Map<number, number>();
 
-  constructor(inputs: readonly string[]) {
+  /** Within a sum or an integral the only input of its own is the running variable. */
+  constructor(inputs: readonly string[], outer?: Compiler) {
     this.inputs = inputs;
-    this.initial = inputs.map(() => NaN);
+    this.outer = outer;
+    this.tape = new TapeBuilder(inputs.length);
   }
 
+  /** The register that holds the value of an expression. */
   register(e: Expression): number {
     const known = this.registerOf.get(e);
     if (known !== undefined) return known;
-    const register = this.place(e);
+    const register = this.outer && !this.isOwn(e) ? this.capture(e, this.outer) : this.place(e);
     this.registerOf.set(e, register);
     return register;
   }
 
-  private constant(value: number): number {
-    const known = this.constants.get(value);
-    if (known !== undefined) return known;
-    const register = this.initial.push(value) - 1;
-    this.constants.set(value, register);
+  /** True where the value depends on an input of this compiler and not of an outer one alone. */
+  private isOwn(e: Expression): boolean {
+    if (e.kind === 'abbreviation' && this.inputs.includes(e.name)) return true;
+    for (const { name } of symbolsOf(e)) if (this.inputs.includes(name)) return true;
+    return false;
+  }
+
+  private capture(e: Expression, outer: Compiler): number {
+    const outside = outer.register(e);
+    const value = outer.tape.constantAt(outside);
+    if (value !== undefined) return this.tape.constant(value);
+    const register = this.tape.input();
+    this.captured.set(e, register);
     return register;
   }
 
-  private isConstant(register: number): boolean {
-    return this.constants.get(this.initial[register] ?? NaN) === register;
-  }
-
-  private emit(instruction: Instruction): number {
-    // What depends on constants alone is computed now.
-    if (instruction.op !== 'special') {
-      const operands = 'b' in instruction ? [instruction.a, instruction.b] : [instruction.a];
-      if (operands.every((operand) => this.isConstant(operand))) {
-        const registers = Float64Array.from(this.initial);
-        return this.constant(step(instruction, registers, []));
-      }
-    }
-    const target = this.initial.push(NaN) - 1;
-    this.instructions.push(instruction);
-    this.targets.push(target);
-    return target;
-  }
-
-  private unary(f: Unary, x: Expression): number {
-    return this.emit({ op: 'unary', a: this.register(x), f });
-  }
-
   private place(e: Expression): number {
+    const { tape } = this;
     switch (e.kind) {
       case 'number':
-        return this.constant(Q.toNumber(e.value));
+        return tape.constant(Q.toNumber(e.value));
       case 'infinity':
-        return this.constant(Infinity);
+        return tape.constant(Infinity);
       case 'symbol': {
-        const index = this.inputs.indexOf(e.name);
+        const index = this.inputs.lastIndexOf(e.name);
         if (index >= 0) return index;
-        return this.constant(e.name === 'pi' ? Math.PI : NaN);
+        return tape.constant(e.name === 'pi' ? Math.PI : NaN);
       }
       case 'abbreviation': {
         // A value given for the name itself goes before the definition.
-        const index = this.inputs.indexOf(e.name);
+        const index = this.inputs.lastIndexOf(e.name);
         return index >= 0 ? index : this.register(e.definition);
       }
       case 'sum':
@@ -185,241 +122,249 @@ class Compiler {
       case 'piecewise':
         return this.piecewise(e);
       case 'element': {
-        const index = compile([e.index], this.inputs);
         const values = e.values.map(Q.toNumber);
-        return this.emit({
-          op: 'special',
-          f: (inputs) => values[Math.round(index(inputs)[0] ?? NaN) - 1] ?? NaN,
-        });
+        return tape.unary(
+          (i) => (Number.isInteger(i) ? (values[i - 1] ?? NaN) : NaN),
+          this.register(e.index),
+        );
       }
     }
   }
 
   private sum(e: Extract<Expression, { kind: 'sum' }>): number {
-    const special = this.nearlyOne(e);
-    if (special !== undefined) return special;
+    const { tape } = this;
+    // e^u − 1 and 1 − e^u keep their digits for small u.
+    const found = exponentialAndOne(e);
+    if (found?.isMinus) {
+      const { argument, sign } = found;
+      return tape.unary(sign > 0 ? Math.expm1 : (u) => -Math.expm1(u), this.register(argument));
+    }
     let result: number | undefined = Q.isZero(e.constant)
       ? undefined
-      : this.constant(Q.toNumber(e.constant));
-    for (const term of e.terms) {
+      : tape.constant(Q.toNumber(e.constant));
+    for (const term of this.grouped(e.terms, sum)) {
       const isMinus = term.kind === 'product' && Q.isOne(Q.negate(term.coefficient));
-      if (isMinus && result !== undefined && term.kind === 'product') {
-        const positive = this.factors(Q.ONE, term.factors);
-        result = this.emit({ op: 'subtract', a: result, b: positive });
+      if (isMinus && result !== undefined) {
+        result = tape.arithmetic('subtract', result, this.factors(Q.ONE, term.factors));
       } else {
         const register = this.register(term);
-        result = result === undefined ? register : this.emit({ op: 'add', a: result, b: register });
+        result = result === undefined ? register : tape.arithmetic('add', result, register);
       }
     }
-    return result ?? this.constant(0);
+    return result ?? tape.constant(0);
   }
 
-  /** e^u − 1 and 1 − e^u keep their digits for small u. */
-  private nearlyOne(e: Extract<Expression, { kind: 'sum' }>): number | undefined {
-    const [term] = e.terms;
-    if (e.terms.length !== 1 || !term) return undefined;
-    const [exponential, sign] =
-      term.kind === 'product' && term.factors.length === 1 && Q.isOne(Q.negate(term.coefficient))
-        ? [term.factors[0], -1]
-        : [term, 1];
-    if (exponential?.kind !== 'call' || exponential.name !== 'exp') return undefined;
-    const [u] = exponential.arguments;
-    if (!u || !Q.equals(e.constant, Q.rational(-sign))) return undefined;
-    return this.unary(sign > 0 ? Math.expm1 : (x) => -Math.expm1(x), u);
+  /** Within a binding, what is not its own as one part, to be computed outside. */
+  private grouped(
+    parts: readonly Expression[],
+    join: (parts: readonly Expression[]) => Expression,
+  ): readonly Expression[] {
+    if (!this.outer) return parts;
+    const foreign = parts.filter((part) => !this.isOwn(part));
+    if (foreign.length < 2) return parts;
+    return [join(foreign), ...parts.filter((part) => this.isOwn(part))];
   }
 
-  private quotient(e: Extract<Expression, { kind: 'product' | 'power' }>): number {
+  private quotient(e: ProductNode): number {
     return e.kind === 'product' ? this.factors(e.coefficient, e.factors) : this.factors(Q.ONE, [e]);
   }
 
   private factors(coefficient: Q.Rational, factors: readonly Expression[]): number {
+    const large: LargeExponential[] = [];
+    const plain: Expression[] = [];
+    for (const factor of factors) {
+      const exponential = asLargeExponential(factor);
+      if (exponential) large.push(exponential);
+      else plain.push(factor);
+    }
+    if (large.length < 2) {
+      const result = this.plainFactors(coefficient, factors);
+      const [only] = large;
+      return only ? this.vanishing(result, only, plain) : result;
+    }
+    const rest = this.plainFactors(coefficient, plain);
+    return this.tape.arithmetic('multiply', rest, this.largeProduct(large));
+  }
+
+  /** Π f(u)^n = exp(Σ n peak(u)) Π rest(u)^n. */
+  private largeProduct(large: readonly LargeExponential[]): number {
+    const { tape } = this;
+    let peak: number | undefined;
+    let rest: number | undefined;
+    for (const part of large) {
+      const u = this.register(part.argument);
+      const ofPeak = tape.arithmetic(
+        'multiply',
+        tape.constant(part.power),
+        tape.unary(part.peak, u),
+      );
+      const ofRest = tape.power(tape.unary(part.rest, u), part.power);
+      peak = peak === undefined ? ofPeak : tape.arithmetic('add', peak, ofPeak);
+      rest = rest === undefined ? ofRest : tape.arithmetic('multiply', rest, ofRest);
+    }
+    const exponential = tape.unary(Math.exp, peak ?? tape.constant(0));
+    return tape.arithmetic('multiply', rest ?? tape.constant(1), exponential);
+  }
+
+  /** u e^(−u) is 0 where a potential u is infinite: the exponential outweighs every power. */
+  private vanishing(
+    result: number,
+    { argument, power }: LargeExponential,
+    others: readonly Expression[],
+  ): number {
+    if (power !== 1 || !others.some(holdsInfinity) || !holdsInfinity(argument)) return result;
+    return this.tape.binary(
+      (value, u) => (u === -Infinity ? 0 : value),
+      result,
+      this.register(argument),
+    );
+  }
+
+  private plainFactors(coefficient: Q.Rational, factors: readonly Expression[]): number {
+    const { tape } = this;
     let above: number | undefined = Q.isOne(coefficient)
       ? undefined
-      : this.constant(Q.toNumber(coefficient));
+      : tape.constant(Q.toNumber(coefficient));
     let below: number | undefined;
-    for (const factor of factors) {
+    for (const factor of this.grouped(factors, product)) {
       const { base, exponent } = splitPower(factor);
       const isBelow = exponent.kind === 'number' && Q.sign(exponent.value) < 0;
       const register = this.power(base, exponent, isBelow);
       if (isBelow) {
-        below =
-          below === undefined ? register : this.emit({ op: 'multiply', a: below, b: register });
+        below = below === undefined ? register : tape.arithmetic('multiply', below, register);
       } else {
-        above =
-          above === undefined ? register : this.emit({ op: 'multiply', a: above, b: register });
+        above = above === undefined ? register : tape.arithmetic('multiply', above, register);
       }
     }
-    if (below === undefined) return above ?? this.constant(1);
-    return this.emit({ op: 'divide', a: above ?? this.constant(1), b: below });
+    if (below === undefined) return above ?? tape.constant(1);
+    return tape.arithmetic('divide', above ?? tape.constant(1), below);
   }
 
   private power(base: Expression, exponent: Expression, inverted: boolean): number {
+    const { tape } = this;
     const a = this.register(base);
-    if (exponent.kind !== 'number') {
-      return this.emit({ op: 'binary', a, b: this.register(exponent), f: Math.pow });
-    }
+    if (exponent.kind !== 'number') return tape.binary(Math.pow, a, this.register(exponent));
     const value = inverted ? Q.negate(exponent.value) : exponent.value;
     if (Q.isOne(value)) return a;
     const n = Q.toNumber(value);
-    if (Q.isInteger(value) && Math.abs(n) <= 64) return this.emit({ op: 'whole power', a, n });
-    if (Q.equals(value, Q.HALF)) return this.emit({ op: 'unary', a, f: Math.sqrt });
-    return this.emit({ op: 'binary', a, b: this.constant(n), f: Math.pow });
+    if (Q.isInteger(value) && Math.abs(n) <= LARGEST_WHOLE_POWER) return tape.power(a, n);
+    if (Q.equals(value, Q.HALF)) return tape.unary(Math.sqrt, a);
+    if (value.denominator === 2n && Math.abs(n) <= LARGEST_WHOLE_POWER) {
+      return tape.power(tape.unary(Math.sqrt, a), Number(value.numerator));
+    }
+    return tape.binary(Math.pow, a, tape.constant(n));
   }
 
   private call(e: Extract<Expression, { kind: 'call' }>): number {
+    const { tape } = this;
     const [x, y, ...rest] = e.arguments;
-    if (!x) return this.constant(NaN);
+    if (!x) return tape.constant(NaN);
     if (e.name === 'ln') return this.logarithm(x);
     const unary = UNARY[e.name];
-    if (unary && !y) return this.unary(unary, x);
+    if (unary && !y) return tape.unary(unary, this.register(x));
     const binary = BINARY[e.name];
-    if (!binary) return this.constant(NaN);
+    if (!binary) return tape.constant(NaN);
     if (!y) return this.register(x);
-    let result = this.emit({
-      op: 'binary',
-      a: this.register(x),
-      b: this.register(y),
-      f: binary,
-    });
-    for (const z of rest) {
-      result = this.emit({ op: 'binary', a: result, b: this.register(z), f: binary });
-    }
+    let result = tape.binary(binary, this.register(x), this.register(y));
+    for (const z of rest) result = tape.binary(binary, result, this.register(z));
     return result;
   }
 
-  /** ln(1 + u) by log1p, ln(1 − e^u) by what suits the size of u. */
   private logarithm(x: Expression): number {
-    if (x.kind === 'sum' && Q.isOne(x.constant)) {
-      const [term] = x.terms;
-      if (x.terms.length === 1 && term?.kind === 'product') {
-        const [exponential] = term.factors;
-        if (
-          term.factors.length === 1 &&
-          Q.isOne(Q.negate(term.coefficient)) &&
-          exponential?.kind === 'call' &&
-          exponential.name === 'exp' &&
-          exponential.arguments[0]
-        ) {
-          return this.unary(lnOneMinusExp, exponential.arguments[0]);
-        }
-      }
-      const rest = x.terms.map((part) => this.register(part));
-      const [first, ...others] = rest;
-      if (first !== undefined) {
-        const u = others.reduce((a, b) => this.emit({ op: 'add', a, b }), first);
-        return this.emit({ op: 'unary', a: u, f: Math.log1p });
-      }
+    const { tape } = this;
+    const large = lnOfLargeExponential(x);
+    if (large) return tape.unary(large.f, this.register(large.argument));
+    if (x.kind === 'call' && x.arguments[0]) {
+      const argument = this.register(x.arguments[0]);
+      if (x.name === 'Gamma') return tape.unary(lnGamma, argument);
+      if (x.name === 'factorial') return tape.unary((n) => lnGamma(n + 1), argument);
     }
-    return this.unary(Math.log, x);
+    if (x.kind === 'sum' && Q.isOne(x.constant)) {
+      return tape.unary(Math.log1p, this.register(sum(x.terms)));
+    }
+    const parts = splitExponentials(x, (name) => this.isGiven(name));
+    if (!parts) return tape.unary(Math.log, this.register(x));
+    const exponent = this.register(sum(parts.exponents));
+    if (parts.rest === one) return exponent;
+    return tape.arithmetic('add', exponent, this.logarithm(parts.rest));
   }
 
-  private binding(
-    e: Extract<Expression, { kind: 'summation' | 'productOver' | 'integral' }>,
-  ): number {
-    const ends = compile([e.from, e.to], this.inputs);
-    const body = compile([e.body], [...this.inputs, e.variable.name]);
-    const bodyAt = (inputs: ArrayLike<number>): ((x: number) => number) => {
-      const values = [...Array.from(inputs), NaN];
-      const result = [NaN];
-      return (x) => {
-        values[values.length - 1] = x;
-        body.into(values, result);
-        return result[0] ?? NaN;
-      };
-    };
-    return this.emit({
-      op: 'special',
-      f: (inputs) => {
-        const [from = NaN, to = NaN] = ends(inputs);
-        const f = bodyAt(inputs);
-        if (e.kind === 'integral') return integrate(f, from, to).value;
+  private isGiven(name: string): boolean {
+    return this.inputs.includes(name) || (this.outer?.isGiven(name) ?? false);
+  }
+
+  private binding(e: Binding): number {
+    const inner = new Compiler([e.variable.name], this);
+    const output = inner.register(e.body);
+    const breakpoints = e.kind === 'integral' ? breakpointsOf(e.body, e.variable) : [];
+    const captured = [...inner.captured];
+    const operands = [e.from, e.to, ...breakpoints, ...captured.map(([part]) => part)].map((part) =>
+      this.register(part),
+    );
+    const body = inner.tape.finish();
+    const registers = captured.map(([, register]) => register);
+    const first = 2 + breakpoints.length;
+    return this.tape.general(
+      (values) => {
+        const [from = NaN, to = NaN] = values;
+        registers.forEach((register, i) => {
+          body.registers[register] = values[first + i] ?? NaN;
+        });
+        const f = functionOf(body, output);
         if (e.kind === 'summation') return sumSeries(f, from, to).value;
-        let product = 1;
-        for (let i = from; i <= to; i++) product *= f(i);
-        return product;
+        if (e.kind === 'productOver') return multiplySeries(f, from, to);
+        const result = integratePieces(f, from, to, values.subarray(2, first));
+        return isSettled(result, WORST_RELATIVE_ERROR) ? result.value : NaN;
       },
-    });
+      operands,
+      true,
+    );
   }
 
   private piecewise(e: Extract<Expression, { kind: 'piecewise' }>): number {
-    const branches = e.branches.map(({ condition, value }) => ({
-      sides: compile([condition.left, condition.right], this.inputs),
-      sign: condition.sign,
-      value: compile([value], this.inputs),
-    }));
-    const otherwise = compile([e.otherwise], this.inputs);
-    return this.emit({
-      op: 'special',
-      f: (inputs) => {
-        for (const { sides, sign, value } of branches) {
-          const [left = NaN, right = NaN] = sides(inputs);
-          if (relationHolds(left, sign, right)) return value(inputs)[0] ?? NaN;
-        }
-        return otherwise(inputs)[0] ?? NaN;
-      },
-    });
+    const { tape } = this;
+    const signs = e.branches.map(({ condition }) => condition.sign);
+    const operands = [
+      ...e.branches.flatMap(({ condition, value }) => [condition.left, condition.right, value]),
+      e.otherwise,
+    ].map((part) => this.register(part));
+    return tape.general((values) => {
+      for (let i = 0; i < signs.length; i++) {
+        const left = values[3 * i] ?? NaN;
+        const right = values[3 * i + 1] ?? NaN;
+        // A side without value decides nothing.
+        if (Number.isNaN(left) || Number.isNaN(right)) return NaN;
+        if (relationHolds(left, signs[i] ?? '=', right)) return values[3 * i + 2] ?? NaN;
+      }
+      return values[3 * signs.length] ?? NaN;
+    }, operands);
   }
 }
 
-function relationHolds(left: number, sign: Relation['sign'], right: number): boolean {
-  switch (sign) {
-    case '<':
-      return left < right;
-    case '<=':
-      return left <= right;
-    case '=':
-      return left === right;
-    case '>=':
-      return left >= right;
-    case '>':
-      return left > right;
-  }
-}
-
-function step(
-  instruction: Instruction,
-  registers: Float64Array,
-  inputs: ArrayLike<number>,
-): number {
-  switch (instruction.op) {
-    case 'add':
-      return (registers[instruction.a] ?? NaN) + (registers[instruction.b] ?? NaN);
-    case 'subtract':
-      return (registers[instruction.a] ?? NaN) - (registers[instruction.b] ?? NaN);
-    case 'multiply':
-      return (registers[instruction.a] ?? NaN) * (registers[instruction.b] ?? NaN);
-    case 'divide':
-      return (registers[instruction.a] ?? NaN) / (registers[instruction.b] ?? NaN);
-    case 'whole power':
-      return wholePower(registers[instruction.a] ?? NaN, instruction.n);
-    case 'unary':
-      return instruction.f(registers[instruction.a] ?? NaN);
-    case 'binary':
-      return instruction.f(registers[instruction.a] ?? NaN, registers[instruction.b] ?? NaN);
-    case 'special':
-      return instruction.f(inputs);
-  }
+function functionOf(tape: Tape, output: number): (x: number) => number {
+  const { registers } = tape;
+  return (x) => {
+    registers[0] = x;
+    tape.run();
+    return registers[output] ?? NaN;
+  };
 }
 
 /**
  * Compiles expressions in named inputs. A symbol that is no input is NaN, π excepted; an input with
  * the name of an abbreviation takes the place of its definition. A value outside the domain of a
- * function comes out as NaN: naming the reason is the caller's business.
+ * function comes out as NaN, as does a sum or an integral that does not settle: naming the reason is
+ * the caller's business.
  */
 export function compile(outputs: readonly Expression[], inputs: readonly string[]): Compiled {
   const compiler = new Compiler(inputs);
   const results = outputs.map((e) => compiler.register(e));
-  const { instructions, targets } = compiler;
-  const registers = Float64Array.from(compiler.initial);
+  const positions = inputs.map((_, i) => i);
+  const tape = compiler.tape.finish();
+  const { registers } = tape;
   const run = (values: ArrayLike<number>): void => {
     for (let i = 0; i < inputs.length; i++) registers[i] = values[i] ?? NaN;
-    for (let i = 0; i < instructions.length; i++) {
-      const instruction = instructions[i];
-      const target = targets[i];
-      if (instruction && target !== undefined) {
-        registers[target] = step(instruction, registers, values);
-      }
-    }
+    tape.run();
   };
   const into = (values: ArrayLike<number>, into: { [index: number]: number }): void => {
     run(values);
@@ -429,23 +374,8 @@ export function compile(outputs: readonly Expression[], inputs: readonly string[
     run(values);
     return results.map((register) => registers[register] ?? NaN);
   };
-  const columns = (
-    given: readonly ArrayLike<number>[],
-    taken: readonly Float64Array[],
-    count: number,
-  ): void => {
-    const state = new Float64Array(inputs.length);
-    for (let row = 0; row < count; row++) {
-      for (let i = 0; i < inputs.length; i++) {
-        const column = given[i];
-        state[i] = column ? (column[column.length === 1 ? 0 : row] ?? NaN) : NaN;
-      }
-      run(state);
-      for (let j = 0; j < results.length; j++) {
-        const column = taken[j];
-        if (column) column[row] = registers[results[j] ?? 0] ?? NaN;
-      }
-    }
+  const columns: Compiled['columns'] = (given, taken, count) => {
+    tape.runColumns(positions, given, results, taken, count);
   };
-  return Object.assign(call, { into, columns, instructionCount: instructions.length });
+  return Object.assign(call, { into, columns, instructionCount: tape.length });
 }
