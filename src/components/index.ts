@@ -41,3 +41,4 @@ export { ModelTable } from './ModelTable.tsx';
 export { SourceText, SourceLine } from './SourceText.tsx';
 export { sourceLines, sourceParts } from './sourceParts.ts';
 export type { SourceKind, SourcePart } from './sourceParts.ts';
+export { raised, writtenUnit } from './writtenUnit.ts';

@@ -17,4 +17,6 @@ export interface DerivationResponse {
   readonly derivation: Derivation | undefined;
   /** Time spent in the worker. */
   readonly milliseconds: number;
+  /** How many expressions the worker holds by now; it never lets go of one. */
+  readonly expressions: number;
 }

@@ -1,4 +1,5 @@
 /** Derives what the page sends, off its main thread. */
+import { internedCount } from '../../shared/algebra/expression.ts';
 import { derive } from '../../shared/thermodynamics/index.ts';
 import type { DerivationRequest, DerivationResponse } from './derivationProtocol.ts';
 
@@ -13,6 +14,7 @@ self.addEventListener('message', ({ data }: MessageEvent<DerivationRequest>) => 
     diagnostics,
     derivation,
     milliseconds: performance.now() - start,
+    expressions: internedCount(),
   };
   self.postMessage(response);
 });

@@ -9,6 +9,9 @@ export const LONGEST_MS = 20_000;
 /** With a newer source waiting, one is given up sooner. */
 export const LONGEST_WITH_NEWER_MS = 2000;
 
+/** A worker that holds more expressions gives way to a fresh one; about 100 MB. */
+export const MOST_EXPRESSIONS = 300_000;
+
 /** What the deriver needs of a Worker. */
 export interface DerivationWorker {
   onmessage: ((event: MessageEvent<DerivationResponse>) => void) | null;
@@ -98,6 +101,11 @@ export class LiveDeriver {
   #finish(response: DerivationResponse): void {
     const running = this.#running;
     if (running?.id !== response.id) return;
+    if (response.expressions > MOST_EXPRESSIONS) {
+      this.#worker?.terminate();
+      // Opened at once, so that the next keystroke does not wait for it.
+      this.#worker = this.#open();
+    }
     this.#next();
     this.#listener.onResponse(response, running.source);
   }

@@ -11,12 +11,14 @@ export interface LiveDerivation {
   readonly diagnostics: readonly Diagnostic[];
   /** Whether `derivation` belongs to an earlier source, since the latest is at fault. */
   readonly isStale: boolean;
-  /** Time that the latest derivation took in the worker. */
+  /** Time that `derivation` took in the worker. */
   readonly milliseconds: number | undefined;
   /** Why nothing could be said of the latest source; undefined where something could. */
   readonly failure: string | undefined;
   /** The source of which `diagnostics` speak. */
   readonly source: string | undefined;
+  /** The source from which `derivation` follows. */
+  readonly soundSource: string | undefined;
 }
 
 const NOTHING: LiveDerivation = {
@@ -26,6 +28,7 @@ const NOTHING: LiveDerivation = {
   milliseconds: undefined,
   failure: undefined,
   source: undefined,
+  soundSource: undefined,
 };
 
 /**
@@ -45,12 +48,13 @@ export function useLiveDerivation(source: string, brief?: readonly string[]): Li
             derivation: derivation ?? before.derivation,
             diagnostics,
             isStale: derivation === undefined,
-            milliseconds,
+            milliseconds: derivation ? milliseconds : before.milliseconds,
             failure: undefined,
             source: of,
+            soundSource: derivation ? of : before.soundSource,
           })),
         onFailure: (failure, of) =>
-          setLive((before) => ({ ...before, isStale: true, failure, source: of })),
+          setLive((before) => ({ ...before, diagnostics: [], isStale: true, failure, source: of })),
       },
       brief,
     );

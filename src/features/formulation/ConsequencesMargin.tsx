@@ -13,20 +13,24 @@ import type { LiveDerivation } from '../../workers/useLiveDerivation.ts';
 
 const MOST_SHOWN = 7;
 const OUTCOME = { passed: 'holds', failed: 'does not hold', undecided: 'not decided' } as const;
+const OUTCOME_COLOUR = {
+  passed: 'text-verdigris',
+  failed: 'text-cinnabar',
+  undecided: 'text-ochre',
+} as const;
 
 export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) {
-  const { derivation, diagnostics, isStale, milliseconds, failure, source } = live;
+  const { derivation, diagnostics, isStale, milliseconds, failure, source, soundSource } = live;
   const faults = diagnostics.filter(({ severity }) => severity === 'error');
   const remarks = diagnostics.filter(({ severity }) => severity !== 'error');
   const shown = (derivation?.properties ?? [])
     .filter(({ symbol }) => CONSEQUENCES.includes(symbol))
     .sort((a, b) => CONSEQUENCES.indexOf(a.symbol) - CONSEQUENCES.indexOf(b.symbol))
     .slice(0, MOST_SHOWN);
-  const lines = source === undefined ? 0 : source.trimEnd().split('\n').length;
   const aside =
-    milliseconds === undefined || isStale
+    soundSource === undefined || milliseconds === undefined
       ? undefined
-      : `as of line ${lines} · ${Math.round(milliseconds)} ms`;
+      : `as of line ${soundSource.trimEnd().split('\n').length} · ${Math.round(milliseconds)} ms`;
   return (
     <Margin label="Consequences">
       <SmallHeading aside={aside}>Consequences</SmallHeading>
@@ -78,7 +82,7 @@ export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) 
               <li key={claim.line} className="flex flex-wrap items-baseline gap-x-8 py-2">
                 <SealMark status={claim.status} />
                 {claim.title || claim.text}
-                <span className="text-label text-ink-3 font-mono">
+                <span className={classes('text-label font-mono', OUTCOME_COLOUR[claim.status])}>
                   {OUTCOME[claim.status]}
                   {claim.method && `, ${claim.method}`}
                 </span>

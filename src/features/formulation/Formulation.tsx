@@ -1,6 +1,6 @@
 /** The Formulation section: the editor, the parameters, and the consequences in the margin. */
 import './formulation.css';
-import { useDeferredValue, useState } from 'react';
+import { useDeferredValue, useEffect, useState } from 'react';
 import type { Draft } from '../../../shared/contracts/models.ts';
 import { format } from '../../../shared/language/index.ts';
 import { useDraft } from '../../api/index.ts';
@@ -29,6 +29,15 @@ import { writeValue } from './writeValue.ts';
 export function Formulation() {
   const { model } = useModelContext();
   const { data: draft, error, isPending, refetch } = useDraft(model.id);
+  // Who comes back to this page sees what others have saved meanwhile.
+  useEffect(() => {
+    const look = (): void => {
+      if (document.visibilityState === 'visible') void refetch();
+    };
+    look();
+    document.addEventListener('visibilitychange', look);
+    return () => document.removeEventListener('visibilitychange', look);
+  }, [refetch]);
   if (isPending) return <Loading what="the formulation" />;
   if (!draft) return <Fault fault={error} onRetry={() => void refetch()} />;
   return <Desk key={model.id} draft={draft} />;

@@ -1,7 +1,7 @@
 /** The declared numbers of a formulation, in step with its text both ways. */
 import { useState } from 'react';
 import type { DeclaredQuantityView } from '../../../shared/contracts/derivation.ts';
-import { Formula } from '../../components/index.ts';
+import { Formula, writtenUnit } from '../../components/index.ts';
 import { positionOf, valueAt, writtenNumber } from './writeValue.ts';
 
 interface ParameterTableProps {
@@ -86,7 +86,7 @@ function Row({
           </span>
         )}
       </td>
-      <td className="text-ink-3">{unit === '' ? '1' : unit}</td>
+      <td className="text-ink-3">{writtenUnit(unit === '' ? '1' : unit)}</td>
       <td className="parameter-range">
         {lower !== null && upper !== null && (
           <input

@@ -67,6 +67,8 @@ export class DraftKeeper {
       } else {
         this.#status = { kind: 'conflict', theirs: draft };
       }
+    } else if (local) {
+      surroundings.writeLocal(undefined);
     }
     this.#view = this.#look();
   }
@@ -126,7 +128,7 @@ export class DraftKeeper {
     this.#tell();
   }
 
-  /** Another tab has saved: a text without changes of its own follows. */
+  /** Somebody else has saved, in another tab say: a text without changes of its own follows. */
   hear(draft: Draft): void {
     if (draft.revision <= this.#draft.revision || this.#status.kind === 'saving') return;
     const isUntouched = !this.#isDirty();
@@ -143,15 +145,20 @@ export class DraftKeeper {
     this.#tell();
   }
 
-  /** The connection is back, perhaps. */
+  /** The connection is back, perhaps, or the person has signed in again. */
   retry(): void {
-    if (this.#status.kind === 'offline') this.#schedule(0);
+    if (this.#status.kind === 'offline' || this.#status.kind === 'refused') this.#schedule(0);
   }
 
   /** What must be sent while the page is being left; undefined where nothing must. */
   unsent(): SaveDraft | undefined {
     if (!this.#isDirty() || this.#status.kind === 'conflict') return undefined;
     return { source: this.#text, basedOn: this.#draft.revision };
+  }
+
+  /** Whether everything typed is on the server. */
+  isSettled(): boolean {
+    return this.#status.kind === 'saved' && !this.#isDirty();
   }
 
   close(): void {
@@ -178,7 +185,7 @@ export class DraftKeeper {
 
   async #save(): Promise<void> {
     if (!this.#isDirty()) {
-      if (this.#status.kind === 'unsaved' || this.#status.kind === 'offline') {
+      if (this.#status.kind !== 'saving' && this.#status.kind !== 'conflict') {
         this.#status = { kind: 'saved', at: this.#draft.updatedAt };
         this.#tell();
       }
@@ -190,14 +197,16 @@ export class DraftKeeper {
     const body = { source: this.#text, basedOn: this.#draft.revision };
     try {
       const outcome = await this.#surroundings.save(body);
-      if (outcome.kind === 'conflict') {
-        this.#status = { kind: 'conflict', theirs: outcome.current };
+      const draft = outcome.kind === 'saved' ? outcome.draft : outcome.current;
+      // A save whose answer was lost, by leaving the page say, comes back as a conflict with itself.
+      if (outcome.kind === 'conflict' && draft.source !== body.source) {
+        this.#status = { kind: 'conflict', theirs: draft };
       } else {
-        this.#draft = outcome.draft;
-        this.#surroundings.tellOthers(outcome.draft);
+        this.#draft = draft;
+        this.#surroundings.tellOthers(draft);
         this.#status = this.#isDirty()
           ? { kind: 'unsaved' }
-          : { kind: 'saved', at: outcome.draft.updatedAt };
+          : { kind: 'saved', at: draft.updatedAt };
         this.#keepLocally();
         if (this.#isDirty()) this.#schedule(SAVE_AFTER_MS);
       }

@@ -31,7 +31,8 @@ export function applyEditorTheme(monaco: typeof Monaco): void {
     inherit: false,
     rules: [
       { token: '', foreground: plain('ink'), background: plain('sheet') },
-      { token: 'keyword', foreground: plain('verdigris') },
+      // The style sheet makes this weight 500, which the editor has no name for.
+      { token: 'keyword', foreground: plain('verdigris'), fontStyle: 'bold' },
       { token: 'unit', foreground: plain('ochre') },
       { token: 'text', foreground: plain('ink-3'), fontStyle: 'italic' },
       { token: 'comment', foreground: plain('ink-3'), fontStyle: 'italic' },

@@ -68,10 +68,12 @@ export class FaultZones {
     const element = document.createElement('div');
     element.className = 'fault-explanation';
     element.setAttribute('role', 'note');
+    // The first clause says what is wrong, the rest why; repairs say what a hint would.
+    const clause = /^[^,]{12,}?(?=, but )/.exec(fault.message)?.[0] ?? fault.message;
     const message = document.createElement('b');
-    message.textContent = fault.message;
-    element.append(message);
-    if (fault.hint !== '') element.append(` ${fault.hint}`);
+    message.textContent = clause;
+    element.append(message, fault.message.slice(clause.length));
+    if (fault.hint !== '' && fault.repairs.length === 0) element.append(` ${fault.hint}`);
     for (const repair of fault.repairs) {
       const button = document.createElement('button');
       button.type = 'button';

@@ -1,11 +1,8 @@
 /** The formulation language as the editor knows it: colours, brackets, completion, hover. */
 import type * as Monaco from 'monaco-editor/editor/editor.api';
-import { completionsAt, hoverAt, type Span } from '../../../shared/language/index.ts';
+import { completionsAt, hoverAt, tokensOf, type Span } from '../../../shared/language/index.ts';
 
 export const LANGUAGE = 'massieu';
-
-const KEYWORDS =
-  /\b(?:ensemble|species|extent|field|response|constant|parameter|between|and|list|let|order|saddle|factorials|molar|report|claim|as|for|in|sum|product|integral|from|to|cases|otherwise)\b/;
 
 let isRegistered = false;
 
@@ -29,17 +26,7 @@ export function registerLanguage(monaco: typeof Monaco): void {
     ],
     wordPattern: /[A-Za-z\u0370-\u03ff][\w\u0370-\u03ff]*/,
   });
-  monaco.languages.setMonarchTokensProvider(LANGUAGE, {
-    tokenizer: {
-      root: [
-        [/#.*$/, 'comment'],
-        [/"[^"]*"?/, 'text'],
-        [/\[[^\]]*\]?/, 'unit'],
-        [KEYWORDS, 'keyword'],
-        [/[A-Za-z\u0370-\u03ff][\w\u0370-\u03ff]*/, ''],
-      ],
-    },
-  });
+  monaco.languages.setTokensProvider(LANGUAGE, tokensProvider);
   monaco.languages.registerCompletionItemProvider(LANGUAGE, {
     triggerCharacters: ['['],
     provideCompletionItems(model, position) {
@@ -72,6 +59,26 @@ export function registerLanguage(monaco: typeof Monaco): void {
     },
   });
 }
+
+/** Nothing carries over from one line to the next: texts, units and remarks end with their line. */
+const NO_STATE: Monaco.languages.IState = { clone: () => NO_STATE, equals: () => true };
+
+const tokensProvider: Monaco.languages.TokensProvider = {
+  getInitialState: () => NO_STATE,
+  tokenize(line) {
+    const tokens: Monaco.languages.IToken[] = [];
+    let end = 0;
+    for (const { kind, span } of tokensOf(line)) {
+      if (span.start > end) tokens.push({ startIndex: end, scopes: '' });
+      tokens.push({ startIndex: span.start, scopes: COLOURED.has(kind) ? kind : '' });
+      end = span.end;
+    }
+    if (end < line.length) tokens.push({ startIndex: end, scopes: '' });
+    return { tokens, endState: NO_STATE };
+  },
+};
+
+const COLOURED: ReadonlySet<string> = new Set(['keyword', 'unit', 'text', 'comment']);
 
 function rangeOf(model: Monaco.editor.ITextModel, span: Span): Monaco.IRange {
   const start = model.getPositionAt(span.start);

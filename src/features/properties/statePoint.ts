@@ -3,6 +3,7 @@ import type { Derivation } from '../../../shared/contracts/derivation.ts';
 import { symbolsOf } from '../../../shared/algebra/traverse.ts';
 import { compile } from '../../../shared/numerics/compile.ts';
 import { fromJson } from '../../../shared/print/json.ts';
+import { raised } from '../../components/index.ts';
 
 export type StatePoint = Readonly<Record<string, number>>;
 
@@ -79,23 +80,5 @@ export function writtenValue(value: number): string {
   const size = Math.abs(value);
   if (size >= 1e-3 && size < 1e6) return String(Number(value.toPrecision(6)));
   const [mantissa = '', exponent = ''] = value.toExponential(5).split('e');
-  return `${Number(mantissa)} × 10${superscript(exponent.replace('+', ''))}`;
-}
-
-const SUPERSCRIPTS: Readonly<Record<string, string>> = {
-  '-': '⁻',
-  0: '⁰',
-  1: '¹',
-  2: '²',
-  3: '³',
-  4: '⁴',
-  5: '⁵',
-  6: '⁶',
-  7: '⁷',
-  8: '⁸',
-  9: '⁹',
-};
-
-function superscript(digits: string): string {
-  return [...digits].map((digit) => SUPERSCRIPTS[digit] ?? digit).join('');
+  return `${Number(mantissa)} × 10${raised(exponent.replace('+', ''))}`;
 }

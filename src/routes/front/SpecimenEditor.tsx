@@ -1,5 +1,5 @@
 /**
- * The editor of the front door: a plain text field under a coloured copy of its text. The copy
+ * The editor of the front door and of narrow screens: a plain text field under a coloured copy of its text. The copy
  * wraps exactly as the field does, since both have the same face, size and padding.
  */
 import type { Diagnostic } from '../../../shared/language/diagnostic.ts';
@@ -11,6 +11,7 @@ import { markFaults } from './markFaults.ts';
 interface SpecimenEditorProps {
   readonly source: string;
   readonly diagnostics: readonly Diagnostic[];
+  readonly isReadOnly?: boolean;
   readonly onChange: (source: string) => void;
 }
 
@@ -29,7 +30,12 @@ function mend(source: string, repair: Diagnostic['repairs'][number]): string {
     );
 }
 
-export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditorProps) {
+export function SpecimenEditor({
+  source,
+  diagnostics,
+  isReadOnly = false,
+  onChange,
+}: SpecimenEditorProps) {
   const lines = markFaults(sourceLines(source), diagnostics);
   const faults = diagnostics.filter(({ severity }) => severity !== 'information');
   const faultyLines = new Set(
@@ -43,6 +49,7 @@ export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditor
             aria-label="Formulation"
             aria-describedby="specimen-faults"
             spellCheck={false}
+            readOnly={isReadOnly}
             autoCapitalize="off"
             autoComplete="off"
             autoCorrect="off"
@@ -103,7 +110,7 @@ export function SpecimenEditor({ source, diagnostics, onChange }: SpecimenEditor
               Line {fault.line}.
             </b>{' '}
             {fault.message} {fault.hint}
-            {fault.repairs.map((repair) => (
+            {(isReadOnly ? [] : fault.repairs).map((repair) => (
               <button
                 key={repair.title}
                 type="button"

@@ -181,6 +181,38 @@ describe('a draft', () => {
     });
   });
 
+  it('whose save was answered to nobody is saved, and meets no other text', async () => {
+    const world = new World(draft('a', 1));
+    const keeper = new DraftKeeper(world.current, world);
+    // The page was left while it was saved; the server has it.
+    world.current = draft('ab', 2);
+    keeper.edit('ab');
+    await pass(2000);
+    expect(keeper.view()).toMatchObject({ text: 'ab', revision: 2, status: { kind: 'saved' } });
+    expect(world.local).toBeUndefined();
+  });
+
+  it('leaves nothing in the browser that the server has', () => {
+    const world = new World(draft('a', 6));
+    world.local = { source: 'a', basedOn: 5 };
+    const keeper = new DraftKeeper(world.current, world);
+    expect(keeper.isSettled()).toBe(true);
+    expect(world.local).toBeUndefined();
+  });
+
+  it('that was refused is tried again when the person comes back', async () => {
+    const world = new World(draft('a', 1));
+    const keeper = new DraftKeeper(world.current, world);
+    world.refuses = 'Sign in first.';
+    keeper.edit('b');
+    await pass(2000);
+    expect(keeper.isSettled()).toBe(false);
+    world.refuses = undefined;
+    keeper.retry();
+    await pass(100);
+    expect(keeper.view().status.kind).toBe('saved');
+  });
+
   it('is flushed before it is frozen', async () => {
     const world = new World(draft('a', 1));
     const keeper = new DraftKeeper(world.current, world);

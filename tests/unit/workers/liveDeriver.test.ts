@@ -7,6 +7,7 @@ import {
   LiveDeriver,
   LONGEST_MS,
   LONGEST_WITH_NEWER_MS,
+  MOST_EXPRESSIONS,
 } from '../../../src/workers/liveDeriver.ts';
 import type { DerivationWorker } from '../../../src/workers/liveDeriver.ts';
 
@@ -24,13 +25,14 @@ class SlowWorker implements DerivationWorker {
     this.isTerminated = true;
   }
 
-  answer(): void {
+  answer(expressions = 100): void {
     const request = this.asked.at(-1);
     const data: DerivationResponse = {
       id: request?.id ?? 0,
       diagnostics: [],
       derivation: undefined,
       milliseconds: 1,
+      expressions,
     };
     this.onmessage?.({ data } as MessageEvent<DerivationResponse>);
   }
@@ -86,6 +88,17 @@ describe('the live deriver', () => {
     workers[1]?.answer();
     expect(answered).toEqual(['light']);
     expect(failed).toEqual([]);
+  });
+
+  it('gives a worker that holds too much up for a fresh one, between two derivations', () => {
+    const { deriver, workers, answered } = stage();
+    deriver.derive('a');
+    deriver.derive('ab');
+    workers[0]?.answer(MOST_EXPRESSIONS + 1);
+    expect(workers[0]?.isTerminated).toBe(true);
+    workers[1]?.answer();
+    expect(answered).toEqual(['a', 'ab']);
+    expect(workers).toHaveLength(2);
   });
 
   it('reports nothing after it was closed', () => {
