@@ -44,8 +44,9 @@ export const problems: ErrorRequestHandler = (error: unknown, request, response,
   const fault = asFault(error);
   const problem = fault.toProblem();
   if (problem.status >= 500) request.log.error({ err: error }, 'request failed');
+  const instance = `urn:massieu:request:${String(response.getHeader('x-request-id'))}`;
   response
     .status(problem.status)
     .type('application/problem+json')
-    .send(JSON.stringify({ ...problem, instance: `urn:massieu:request:${String(request.id)}` }));
+    .send(JSON.stringify({ ...problem, instance }));
 };
