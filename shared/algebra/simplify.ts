@@ -88,7 +88,7 @@ export class Simplifier {
     const tried = new Map<Term, Map<Term, Merger | undefined>>();
     const merge = (a: Term, b: Term): Merger | undefined => {
       let known = tried.get(a);
-      if (!known) tried.set(a, (known = new Map()));
+      if (!known) tried.set(a, (known = new Map<Term, Merger | undefined>()));
       if (!known.has(b)) known.set(b, this.merge(a, b));
       return known.get(b);
     };
