@@ -82,7 +82,7 @@ async function hotReload(server: Server): Promise<RequestHandler> {
     server: { middlewareMode: true, hmr: { server } },
     appType: 'spa',
   });
-  return vite.middlewares as unknown as RequestHandler;
+  return vite.middlewares;
 }
 
 main().catch((error: unknown) => {

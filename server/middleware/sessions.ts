@@ -33,7 +33,7 @@ export function openSessionStore(databaseUrl: string, log: Logger): SessionStore
   return {
     store,
     async close() {
-      await store.close();
+      store.close();
       await pool.end();
     },
   };

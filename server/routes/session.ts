@@ -42,11 +42,16 @@ async function describe(
   };
 }
 
+/** passport hands on whatever was thrown. */
+function asError(thrown: unknown): Error {
+  return thrown instanceof Error ? thrown : new Error('signing in failed', { cause: thrown });
+}
+
 /** passport gives the session a new id, so that one set by somebody else before is of no use. */
 function signIn(request: Request, person: PersonRow): Promise<void> {
   return new Promise((resolve, reject) => {
     request.logIn(person, (error: unknown) => {
-      if (error) reject(error as Error);
+      if (error) reject(asError(error));
       else resolve();
     });
   });
@@ -67,7 +72,7 @@ export function sessionRoutes(dependencies: SessionDependencies): Router {
       const verify = passport.authenticate(
         'local',
         (error: unknown, found: PersonRow | false | undefined) => {
-          if (error) reject(error as Error);
+          if (error) reject(asError(error));
           else if (found) resolve(found);
           else reject(new Fault('wrong-credentials', 'Write both the address and the password.'));
         },
