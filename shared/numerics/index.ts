@@ -1,8 +1,8 @@
 /** Numbers from expressions. */
 export { compile, type Compiled } from './compile.ts';
-export { integrate, type Quadrature } from './quadrature.ts';
+export { integrate, integratePieces, isSettled, type Quadrature } from './quadrature.ts';
 export { sumSeries, type SeriesSum } from './sumSeries.ts';
-export { brent } from './roots.ts';
+export { brent, newton } from './roots.ts';
 export {
   evaluatePrecisely,
   isCostly,

@@ -1,10 +1,14 @@
 /** Values and derivatives of expressions with many digits. */
 import { childrenOf, type Expression, type Relation } from '../algebra/expression.ts';
+import { symbolsOf } from '../algebra/traverse.ts';
 import { big, BIG_ONE, BIG_PI, BIG_ZERO, bigOfRational, type BigNumber } from './bigNumber.ts';
+import { breakpointsOf } from './breakpoints.ts';
+import { holdsInfinity } from './infinitePotential.ts';
+import { integratePrecisely } from './preciseQuadrature.ts';
 import {
-  integratePrecisely,
   preciseBesselI,
   preciseErf,
+  preciseGamma,
   preciseLnGamma,
   precisePolygamma,
   precisePolylogarithm,
@@ -19,17 +23,27 @@ const MOST_TERMS = 20_000;
 class Evaluator {
   private readonly values: PreciseValues;
   private readonly memory = new Map<Expression, BigNumber | undefined>();
+  private readonly outer: Evaluator | undefined;
+  private readonly running: string | undefined;
 
-  constructor(values: PreciseValues) {
+  /** Within a sum or an integral, what does not hold the running variable is left to `outer`. */
+  constructor(values: PreciseValues, outer?: Evaluator, running?: string) {
     this.values = values;
+    this.outer = outer;
+    this.running = running;
   }
 
   at(e: Expression): BigNumber | undefined {
     if (this.memory.has(e)) return this.memory.get(e);
-    const value = this.work(e);
+    const value = this.outer && !this.isOwn(e) ? this.outer.at(e) : this.work(e);
     const result = value?.isNaN() ? undefined : value;
     this.memory.set(e, result);
     return result;
+  }
+
+  private isOwn(e: Expression): boolean {
+    for (const { name } of symbolsOf(e)) if (name === this.running) return true;
+    return false;
   }
 
   private work(e: Expression): BigNumber | undefined {
@@ -48,6 +62,7 @@ class Evaluator {
       case 'sum':
         return this.fold(e.terms, bigOfRational(e.constant), (a, b) => a.plus(b));
       case 'product':
+        if (this.vanishes(e)) return BIG_ZERO;
         return this.fold(e.factors, bigOfRational(e.coefficient), (a, b) => a.times(b));
       case 'power': {
         const base = this.at(e.base);
@@ -76,10 +91,23 @@ class Evaluator {
       }
       case 'element': {
         const index = this.at(e.index);
-        const value = index && e.values[index.toNumber() - 1];
+        const value = index?.isInteger() ? e.values[index.toNumber() - 1] : undefined;
         return value ? bigOfRational(value) : undefined;
       }
     }
+  }
+
+  /** u e^(−u) within a hard core, where u is infinite. */
+  private vanishes(e: Extract<Expression, { kind: 'product' }>): boolean {
+    return e.factors.some((factor) => {
+      if (factor.kind !== 'call' || factor.name !== 'exp') return false;
+      const [u] = factor.arguments;
+      if (!u || !holdsInfinity(u) || !e.factors.some((f) => f !== factor && holdsInfinity(f))) {
+        return false;
+      }
+      const value = this.at(u);
+      return value !== undefined && !value.isFinite() && value.isNegative();
+    });
   }
 
   private fold(
@@ -160,9 +188,9 @@ class Evaluator {
       case 'lnGamma':
         return preciseLnGamma(x);
       case 'Gamma':
-        return preciseLnGamma(x)?.exp();
+        return preciseGamma(x);
       case 'factorial':
-        return preciseLnGamma(x.plus(1))?.exp();
+        return preciseGamma(x.plus(1));
       case 'digamma':
         return precisePolygamma(0, x);
       case 'polygamma':
@@ -192,9 +220,16 @@ class Evaluator {
     const from = this.at(e.from);
     const to = this.at(e.to);
     if (!from || !to) return undefined;
-    const body = (x: BigNumber): BigNumber | undefined =>
-      new Evaluator(new Map([...this.values, [e.variable.name, x]])).at(e.body);
-    if (e.kind === 'integral') return integratePrecisely(body, from, to);
+    const { name } = e.variable;
+    const values = new Map(this.values);
+    const body = (x: BigNumber): BigNumber | undefined => {
+      values.set(name, x);
+      return new Evaluator(values, this, name).at(e.body);
+    };
+    if (e.kind === 'integral') {
+      const points = breakpointsOf(e.body, e.variable).flatMap((point) => this.at(point) ?? []);
+      return integratePrecisely(body, from, to, points);
+    }
     const first = from.toNumber();
     if (!to.isFinite()) {
       return e.kind === 'summation' ? sumPrecisely((n) => body(big(n)), first) : undefined;
@@ -219,10 +254,16 @@ export function evaluatePrecisely(e: Expression, values: PreciseValues): BigNumb
   return new Evaluator(values).at(e);
 }
 
+const costly = new WeakMap<Expression, boolean>();
+
 /** True where the expression holds sums or integrals, which cost many evaluations each. */
 export function isCostly(e: Expression): boolean {
   if (e.kind === 'summation' || e.kind === 'integral' || e.kind === 'productOver') return true;
-  return childrenOf(e).some(isCostly);
+  const known = costly.get(e);
+  if (known !== undefined) return known;
+  const result = childrenOf(e).some(isCostly);
+  costly.set(e, result);
+  return result;
 }
 
 /**

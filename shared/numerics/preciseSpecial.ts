@@ -1,5 +1,6 @@
 /** Special functions to all the digits of `bigNumber.ts`. */
 import * as Q from '../algebra/rational.ts';
+import { integratePrecisely } from './preciseQuadrature.ts';
 import {
   big,
   BIG_ONE,
@@ -49,6 +50,14 @@ export function preciseLnGamma(x: BigNumber): BigNumber | undefined {
   }
   const lead = shifted.minus(0.5).times(shifted.ln()).minus(shifted);
   return lead.plus(BIG_PI.times(2).ln().div(2)).plus(series).minus(product.ln());
+}
+
+/** Γ(x), by reflection (DLMF 5.5.3) for negative x; undefined at the poles. */
+export function preciseGamma(x: BigNumber): BigNumber | undefined {
+  if (x.gt(0)) return preciseLnGamma(x)?.exp();
+  if (x.isInteger()) return undefined;
+  const reflected = preciseLnGamma(BIG_ONE.minus(x))?.exp();
+  return reflected && BIG_PI.div(BIG_PI.times(x).sin().times(reflected));
 }
 
 /** ψ⁽ⁿ⁾(x) for x > 0 by the derivative of Stirling's series (DLMF 5.15.8). */
@@ -121,10 +130,24 @@ export function preciseErf(x: BigNumber): BigNumber | undefined {
   return sum?.times(2).div(BIG_PI.sqrt()).times(x.times(x).neg().exp());
 }
 
-/** Li_s(z) by its series for |z| < 1. */
+/**
+ * Li_s(z) by its series for |z| < 0.97, for other z ≤ 1 by the integral
+ * z/Γ(s) ∫ t^(s−1)/(e^t − z) dt (DLMF 25.12.11), which needs s > 0 (s > 1 at z = 1).
+ */
 export function precisePolylogarithm(s: BigNumber, z: BigNumber): BigNumber | undefined {
   if (z.isZero()) return BIG_ZERO;
-  if (z.abs().gt(0.97)) return undefined;
+  if (z.abs().gt(0.97)) {
+    if (z.gt(1) || !s.gt(z.eq(1) ? 1 : 0)) return undefined;
+    const gamma = preciseGamma(s);
+    const integral = integratePrecisely(
+      // e^t − 1 of a small t has lost its digits, but t^(s−1)/t has not.
+      (t) =>
+        z.eq(1) && t.lt('1e-30') ? t.pow(s.minus(2)) : t.pow(s.minus(1)).div(t.exp().minus(z)),
+      BIG_ZERO,
+      big('Infinity'),
+    );
+    return gamma && integral?.times(z).div(gamma);
+  }
   let power = BIG_ONE;
   return sumPrecisely((n) => {
     power = power.times(z);
@@ -144,52 +167,4 @@ export function preciseBesselI(order: BigNumber, x: BigNumber): BigNumber | unde
     if (n > 0) term = term.times(quarter).div(nu.plus(n).times(n));
     return term;
   }, 0);
-}
-
-/**
- * ∫ f from a to b by the double-exponential rule (Takahasi and Mori 1974), halving the step until
- * thirty-odd digits stand; undefined where they do not.
- */
-export function integratePrecisely(
-  f: (x: BigNumber) => BigNumber | undefined,
-  a: BigNumber,
-  b: BigNumber,
-): BigNumber | undefined {
-  if (!a.isFinite() || a.gt(b)) return undefined;
-  const isEndless = !b.isFinite();
-  const half = isEndless ? BIG_ONE : b.minus(a).div(2);
-  const quarterTurn = BIG_PI.div(2);
-  const at = (t: BigNumber): BigNumber | undefined => {
-    const u = quarterTurn.times(t.sinh());
-    const speed = quarterTurn.times(t.cosh());
-    if (isEndless) {
-      const distance = u.exp();
-      const value = f(a.plus(distance));
-      return value?.times(distance).times(speed);
-    }
-    const cosh = u.cosh();
-    const distance = half.times(u.abs().neg().exp()).div(cosh);
-    const x = t.isNegative() ? a.plus(distance) : b.minus(distance);
-    if (x.lte(a) || x.gte(b)) return BIG_ZERO;
-    return f(x)?.times(half).times(speed).div(cosh.times(cosh));
-  };
-  let previous: BigNumber | undefined;
-  const reach = 5;
-  let sum = BIG_ZERO;
-  for (let level = 0; level <= 6; level++) {
-    const step = big(2 ** -level);
-    const stride = level === 0 ? 1 : 2;
-    const count = Math.floor(reach * 2 ** level);
-    for (let k = level === 0 ? 0 : 1; k <= count; k += stride) {
-      for (const sign of k === 0 ? [1] : [1, -1]) {
-        const value = at(step.times(k * sign));
-        if (!value) return undefined;
-        if (value.isFinite()) sum = sum.plus(value);
-      }
-    }
-    const value = sum.times(step);
-    if (previous && value.minus(previous).abs().lte(value.abs().times(1e-36))) return value;
-    previous = value;
-  }
-  return undefined;
 }

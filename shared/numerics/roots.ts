@@ -60,3 +60,40 @@ export function brent(
   }
   return right;
 }
+
+/**
+ * A zero of f between a and b, where f has opposite signs, by Newton's method, which halves the
+ * bracket instead wherever a step would leave it or gain too little (as rtsafe of W. H. Press et
+ * al., Numerical Recipes, ch. 9.4, describes the safeguard). `f` returns the value and the slope.
+ * Undefined where the signs are equal or a value is missing.
+ */
+export function newton(
+  f: (x: number) => readonly [value: number, slope: number],
+  a: number,
+  b: number,
+  tolerance = 0,
+): number | undefined {
+  const [fa] = f(a);
+  const [fb] = f(b);
+  if (fa === 0) return a;
+  if (fb === 0) return b;
+  if (!(fa * fb < 0)) return undefined;
+  let [below, above] = fa < 0 ? [a, b] : [b, a];
+  let x = (a + b) / 2;
+  let before = Math.abs(b - a);
+  for (let i = 0; i < 200; i++) {
+    const [value, slope] = f(x);
+    if (Number.isNaN(value)) return undefined;
+    if (value === 0) return x;
+    if (value < 0) below = x;
+    else above = x;
+    const [low, high] = below < above ? [below, above] : [above, below];
+    const byNewton = x - value / slope;
+    const isSafe = byNewton > low && byNewton < high && Math.abs(byNewton - x) < before / 2;
+    const next = isSafe ? byNewton : (low + high) / 2;
+    before = Math.abs(next - x);
+    x = next;
+    if (before <= 2 * Number.EPSILON * Math.abs(x) + tolerance / 2) return x;
+  }
+  return x;
+}

@@ -1,4 +1,5 @@
 /** The gamma function, its logarithm and its logarithmic derivatives for real arguments. */
+import { zetaSum } from './zetaSum.ts';
 
 /**
  * Coefficients B_{2n}/(2n (2n − 1)) of Stirling's series (DLMF 5.11.1), exact fractions in doubles.
@@ -31,8 +32,8 @@ export function lnGamma(x: number): number {
   if (x < STIRLING_FROM) {
     // Γ(x) = Γ(x + n)/(x (x + 1) …); near 1 and 2 the logarithm of the quotient keeps its digits
     // only as far as log1p can, so those have the series about the zero.
-    if (Math.abs(x - 1) < 0.25) return nearOne(x - 1);
-    if (Math.abs(x - 2) < 0.25) return Math.log1p(x - 2) + nearOne(x - 2);
+    if (Math.abs(x - 1) < NEAR) return nearOne(x - 1);
+    if (Math.abs(x - 2) < NEAR) return Math.log1p(x - 2) + nearOne(x - 2);
     let shifted = x;
     let product = 1;
     while (shifted < STIRLING_FROM) product *= shifted++;
@@ -49,23 +50,10 @@ function stirling(x: number): number {
   return (x - 0.5) * Math.log(x) - x + HALF_LN_TWO_PI + sum * inverse;
 }
 
-/** ζ(n) for n = 2 …; from 30 on it is 1 + 2^−n to rounding. */
-const ZETA: readonly number[] = Array.from({ length: 40 }, (_, i) => zeta(i + 2));
-
-function zeta(n: number): number {
-  // Euler–Maclaurin after 12 terms (DLMF 25.2.9) with three corrections.
-  const from = 12;
-  let sum = 0;
-  for (let k = 1; k < from; k++) sum += k ** -n;
-  return (
-    sum +
-    from ** (1 - n) / (n - 1) +
-    from ** -n / 2 +
-    (n * from ** (-n - 1)) / 12 -
-    (n * (n + 1) * (n + 2) * from ** (-n - 3)) / 720 +
-    (n * (n + 1) * (n + 2) * (n + 3) * (n + 4) * from ** (-n - 5)) / 30240
-  );
-}
+/** ζ(n) for n = 2, 3 …, for the series about the zeros of ln Γ. */
+const ZETA: readonly number[] = Array.from({ length: 44 }, (_, i) => zetaSum(i + 2));
+/** How far from 1 and 2 that series is used. */
+const NEAR = 0.4;
 
 const EULER_GAMMA = 0.5772156649015329;
 
@@ -88,16 +76,14 @@ export function gamma(x: number): number {
   }
   if (x < 0.5) return Math.PI / (Math.sin(Math.PI * x) * gamma(1 - x));
   if (x > 171.7) return Infinity;
+  // Stirling's formula about 10, and the functional equation from there: the power x^x of a large x
+  // would cost two digits.
   let shifted = x;
-  let product = 1;
-  while (shifted < STIRLING_FROM) product *= shifted++;
-  // The power in two halves, since x^x overflows before Γ does.
-  const half = Math.pow(shifted, shifted / 2 - 0.25);
-  const correction =
-    stirling(shifted) - ((shifted - 0.5) * Math.log(shifted) - shifted + HALF_LN_TWO_PI);
-  return (
-    (Math.sqrt(2 * Math.PI) * half * Math.exp(-shifted) * half * Math.exp(correction)) / product
-  );
+  let below = 1;
+  let above = 1;
+  while (shifted < STIRLING_FROM) below *= shifted++;
+  while (shifted >= STIRLING_FROM + 1) above *= --shifted;
+  return (Math.exp(stirling(shifted)) / below) * above;
 }
 
 /** Bernoulli numbers B_2, B_4 … B_20. */
