@@ -21,6 +21,11 @@ export async function listen(
   let client: pg.Client | undefined;
   let isClosed = false;
   let timer: NodeJS.Timeout | undefined;
+  /** A connection lost while it is being made is reported twice, and made once. */
+  const connectLater = (): void => {
+    clearTimeout(timer);
+    timer = setTimeout(again, RECONNECT_MS);
+  };
   const connect = async (): Promise<void> => {
     const next = new pg.Client({ connectionString: url });
     next.on('notification', ({ payload }) => {
@@ -29,7 +34,7 @@ export async function listen(
     const lost = (): void => {
       if (isClosed || client !== next) return;
       client = undefined;
-      timer = setTimeout(again, RECONNECT_MS);
+      connectLater();
     };
     next.on('error', lost);
     next.on('end', lost);
@@ -40,7 +45,7 @@ export async function listen(
   const again = (): void => {
     connect().then(reconnected, (error: unknown) => {
       log.warn({ err: error, channel }, 'cannot listen to the database, trying again');
-      if (!isClosed) timer = setTimeout(again, RECONNECT_MS);
+      if (!isClosed) connectLater();
     });
   };
   await connect();
