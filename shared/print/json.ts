@@ -10,8 +10,16 @@ import type { Rational } from '../algebra/rational.ts';
 
 export type ExpressionJson = string | readonly ExpressionJson[];
 
-/** `["*", "3/2", ["s", "N", "+"], …]` */
+/**
+ * `["*", "3/2", ["s", "N", "+"], …]`. The definition of an abbreviation stands where it is met first;
+ * after that its name alone, since lets that use lets twice would double the text with each.
+ */
 export function toJson(e: Expression): ExpressionJson {
+  return write(e, new Map());
+}
+
+function write(e: Expression, written: Map<string, Expression>): ExpressionJson {
+  const inner = (part: Expression): ExpressionJson => write(part, written);
   switch (e.kind) {
     case 'number':
       return ['n', Q.toText(e.value)];
@@ -20,32 +28,35 @@ export function toJson(e: Expression): ExpressionJson {
     case 'symbol':
       return ['s', e.name, (e.positive ? '+' : '') + (e.integer ? 'i' : '')];
     case 'abbreviation':
-      return ['let', e.name, toJson(e.definition)];
+      if (written.get(e.name) === e) return ['let', e.name];
+      // A second abbreviation of the same name is written out each time.
+      if (!written.has(e.name)) written.set(e.name, e);
+      return ['let', e.name, inner(e.definition)];
     case 'sum':
-      return ['+', Q.toText(e.constant), ...e.terms.map(toJson)];
+      return ['+', Q.toText(e.constant), ...e.terms.map(inner)];
     case 'product':
-      return ['*', Q.toText(e.coefficient), ...e.factors.map(toJson)];
+      return ['*', Q.toText(e.coefficient), ...e.factors.map(inner)];
     case 'power':
-      return ['^', toJson(e.base), toJson(e.exponent)];
+      return ['^', inner(e.base), inner(e.exponent)];
     case 'call':
-      return ['f', e.name, ...e.arguments.map(toJson)];
+      return ['f', e.name, ...e.arguments.map(inner)];
     case 'summation':
     case 'productOver':
     case 'integral':
-      return [e.kind, toJson(e.variable), toJson(e.from), toJson(e.to), toJson(e.body)];
+      return [e.kind, inner(e.variable), inner(e.from), inner(e.to), inner(e.body)];
     case 'piecewise':
       return [
         'cases',
         ...e.branches.map(({ condition, value }) => [
-          toJson(condition.left),
+          inner(condition.left),
           condition.sign,
-          toJson(condition.right),
-          toJson(value),
+          inner(condition.right),
+          inner(value),
         ]),
-        toJson(e.otherwise),
+        inner(e.otherwise),
       ];
     case 'element':
-      return ['list', e.list, e.values.map(Q.toText), toJson(e.index)];
+      return ['list', e.list, e.values.map(Q.toText), inner(e.index)];
   }
 }
 
@@ -69,9 +80,14 @@ const SIGNS: readonly string[] = ['<', '<=', '=', '>=', '>'];
 
 /** The expression written by `toJson`. Throws an Error for anything else. */
 export function fromJson(json: unknown): Expression {
+  return read(json, new Map());
+}
+
+function read(json: unknown, known: Map<string, Expression>): Expression {
+  const inner = (part: unknown): Expression => read(part, known);
   if (!Array.isArray(json)) throw new Malformed('an array expected');
   const parts = json as readonly ExpressionJson[];
-  const rest = (from: number): Expression[] => parts.slice(from).map(fromJson);
+  const rest = (from: number): Expression[] => parts.slice(from).map(inner);
   switch (textAt(parts, 0)) {
     case 'n':
       return C.number(rationalOf(textAt(parts, 1)));
@@ -84,14 +100,23 @@ export function fromJson(json: unknown): Expression {
         integer: flags.includes('i'),
       });
     }
-    case 'let':
-      return C.abbreviation(textAt(parts, 1), fromJson(parts[2]));
+    case 'let': {
+      const name = textAt(parts, 1);
+      if (parts.length < 3) {
+        const abbreviation = known.get(name);
+        if (!abbreviation) throw new Malformed(`no definition of ${name}`);
+        return abbreviation;
+      }
+      const abbreviation = C.abbreviation(name, inner(parts[2]));
+      if (!known.has(name)) known.set(name, abbreviation);
+      return abbreviation;
+    }
     case '+':
       return C.sum([C.number(rationalOf(textAt(parts, 1))), ...rest(2)]);
     case '*':
       return C.product([C.number(rationalOf(textAt(parts, 1))), ...rest(2)]);
     case '^':
-      return C.power(fromJson(parts[1]), fromJson(parts[2]));
+      return C.power(inner(parts[1]), inner(parts[2]));
     case 'f': {
       const name = textAt(parts, 1);
       if (!isFunctionName(name)) throw new Malformed(`no function ${name}`);
@@ -110,9 +135,12 @@ export function fromJson(json: unknown): Expression {
     case 'cases': {
       const branches = parts.slice(1, -1).map((branch) => {
         if (!Array.isArray(branch)) throw new Malformed('a branch');
-        return { condition: relationOf(branch as ExpressionJson[]), value: fromJson(branch[3]) };
+        return {
+          condition: relationOf(branch as ExpressionJson[], inner),
+          value: inner(branch[3]),
+        };
       });
-      return C.piecewise(branches, fromJson(parts[parts.length - 1]));
+      return C.piecewise(branches, inner(parts[parts.length - 1]));
     }
     case 'list': {
       const values = parts[2];
@@ -121,7 +149,7 @@ export function fromJson(json: unknown): Expression {
       return C.element(
         textAt(parts, 1),
         numbers.map((_, i) => rationalOf(textAt(numbers, i))),
-        fromJson(parts[3]),
+        inner(parts[3]),
       );
     }
     default:
@@ -129,8 +157,11 @@ export function fromJson(json: unknown): Expression {
   }
 }
 
-function relationOf(branch: readonly ExpressionJson[]): Relation {
+function relationOf(
+  branch: readonly ExpressionJson[],
+  inner: (part: unknown) => Expression,
+): Relation {
   const sign = textAt(branch, 1);
   if (!SIGNS.includes(sign)) throw new Malformed(`no relation ${sign}`);
-  return { left: fromJson(branch[0]), sign: sign as RelationSign, right: fromJson(branch[2]) };
+  return { left: inner(branch[0]), sign: sign as RelationSign, right: inner(branch[2]) };
 }

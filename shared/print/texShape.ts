@@ -102,7 +102,7 @@ export function levels(a: Arranged): number {
   }
 }
 
-/** How many pairs of delimiters stand inside; the bar of ln (a/b) counts as one. */
+/** How many pairs of delimiters stand inside each other; the bars of ln (a/b) count as one pair. */
 export function nesting(a: Arranged): number {
   const inner = largest(partsOf(a), nesting);
   switch (a.kind) {
@@ -115,9 +115,9 @@ export function nesting(a: Arranged): number {
       return isShort(a.base) || a.base.kind === 'call' ? inner : inner + 1;
     case 'call': {
       const [x] = a.arguments;
-      const isBare =
-        x !== undefined && isShort(x) && (a.name === 'factorial' || isBareArgument(a.name, x));
-      return isBare || isRaised(a) ? inner : inner + 1;
+      if (isRaised(a) || !x) return inner;
+      if (isShort(x) && (a.name === 'factorial' || isBareArgument(a.name, x))) return inner;
+      return isBareArgument(a.name, x) ? Math.max(inner, 1) : inner + 1;
     }
     default:
       return inner;
