@@ -27,11 +27,13 @@ function write(e: Expression, written: Map<string, Expression>): ExpressionJson 
       return ['inf'];
     case 'symbol':
       return ['s', e.name, (e.positive ? '+' : '') + (e.integer ? 'i' : '')];
-    case 'abbreviation':
+    case 'abbreviation': {
       if (written.get(e.name) === e) return ['let', e.name];
-      // A second abbreviation of the same name is written out each time.
+      const definition = inner(e.definition);
+      // Reading keeps the same order; a second abbreviation of a name is written out each time.
       if (!written.has(e.name)) written.set(e.name, e);
-      return ['let', e.name, inner(e.definition)];
+      return ['let', e.name, definition];
+    }
     case 'sum':
       return ['+', Q.toText(e.constant), ...e.terms.map(inner)];
     case 'product':
