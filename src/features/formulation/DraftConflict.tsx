@@ -18,8 +18,8 @@ export function DraftConflict({ mine, theirs, onSettle }: DraftConflictProps) {
     <section aria-label="Two texts of this draft" className="border-ochre mb-22 border-l-2 pl-14">
       <p className="text-note text-ink-2">
         <b className="text-ochre">Two texts.</b> {theirs.updatedBy.name} saved another text{' '}
-        <RelativeTime at={theirs.updatedAt} />. Nothing is lost: keep one of them, or bring the left
-        one to what it should be.
+        <RelativeTime at={theirs.updatedAt} />. Nothing is lost: keep yours, edited here if need be,
+        or take the other.
       </p>
       <div className="desk:grid-cols-2 mt-14 grid gap-22">
         <label className="text-label text-ink-3 font-mono">
@@ -37,10 +37,8 @@ export function DraftConflict({ mine, theirs, onSettle }: DraftConflictProps) {
         </label>
       </div>
       <div className="mt-14 flex flex-wrap gap-10">
-        <ActButton onClick={() => onSettle(text)}>Save the left text</ActButton>
-        <QuietButton onClick={() => onSettle(theirs.source)}>
-          Take the text of {theirs.updatedBy.name}
-        </QuietButton>
+        <ActButton onClick={() => onSettle(text)}>Keep mine</ActButton>
+        <QuietButton onClick={() => onSettle(theirs.source)}>Take theirs</QuietButton>
       </div>
     </section>
   );

@@ -1,6 +1,6 @@
 /** The Properties section: the sheet of a version, or of the draft while there is no version. */
 import { Link, useSearchParams } from 'react-router-dom';
-import { isSettled, useDraft, useVersion, useVersions } from '../../api/index.ts';
+import { useDraft, useVersion, useVersions } from '../../api/index.ts';
 import { DerivationProgress, Empty, Fault, Loading, Note, Stale } from '../../components/index.ts';
 import { useModelContext } from '../../routes/model/modelContext.ts';
 import { useLiveDerivation } from '../../workers/useLiveDerivation.ts';
@@ -10,8 +10,9 @@ import './properties.css';
 export function Properties() {
   const { model } = useModelContext();
   const [parameters] = useSearchParams();
-  const asked = Number(parameters.get('version'));
-  const number = Number.isInteger(asked) && asked > 0 ? asked : (model.latestVersion?.number ?? 0);
+  const asked = parameters.get('version') ?? '';
+  const latest = model.latestVersion?.number ?? 0;
+  const number = asked === 'draft' ? 0 : /^[1-9]\d{0,8}$/.test(asked) ? Number(asked) : latest;
   return number === 0 ? <OfDraft /> : <OfVersion key={number} number={number} />;
 }
 
@@ -23,27 +24,29 @@ function OfVersion({ number }: { readonly number: number }) {
   return (
     <>
       <VersionChoice number={number} />
-      {!isSettled(version.derivation.state) || version.derivation.state !== 'complete' ? (
-        <DerivationProgress modelId={model.id} version={version} mayAct={model.mayEdit} />
-      ) : null}
+      <DerivationProgress modelId={model.id} version={version} mayAct={model.mayEdit} />
       {version.result && (
-        <PropertySheet derivation={version.result} verification={version.verification} />
+        <PropertySheet
+          source={version.source}
+          derivation={version.result}
+          verification={version.verification}
+        />
       )}
     </>
   );
 }
 
-/** Which version is shown, with the way to the others. */
+/** Which version is shown, with the way to the others and to the draft; number 0 is the draft. */
 function VersionChoice({ number }: { readonly number: number }) {
   const { model } = useModelContext();
   const { data: versions } = useVersions(model.id);
   const [parameters, setParameters] = useSearchParams();
-  if (!versions || versions.length < 2) return null;
+  if (!versions || versions.length === 0) return null;
   return (
     <label className="text-label text-ink-3 mb-14 flex items-baseline gap-10 font-mono">
-      of version
+      properties of
       <select
-        value={number}
+        value={number === 0 ? 'draft' : number}
         onChange={(event) => {
           parameters.set('version', event.target.value);
           setParameters(parameters);
@@ -52,10 +55,11 @@ function VersionChoice({ number }: { readonly number: number }) {
       >
         {versions.map((version) => (
           <option key={version.number} value={version.number}>
-            {version.number}
+            version {version.number}
             {version.note === '' ? '' : `, ${version.note}`}
           </option>
         ))}
+        <option value="draft">the draft</option>
       </select>
     </label>
   );
@@ -66,7 +70,12 @@ function OfDraft() {
   const { data: draft, error, isPending, refetch } = useDraft(model.id);
   if (isPending) return <Loading what="the draft" />;
   if (!draft) return <Fault fault={error} onRetry={() => void refetch()} />;
-  return <LiveSheet source={draft.source} />;
+  return (
+    <>
+      <VersionChoice number={0} />
+      <LiveSheet source={draft.source} />
+    </>
+  );
 }
 
 function LiveSheet({ source }: { readonly source: string }) {
@@ -79,7 +88,7 @@ function LiveSheet({ source }: { readonly source: string }) {
           These follow from the draft, which has not been verified. Freeze a version to have every
           property verified and kept.
         </Stale>
-        <PropertySheet derivation={live.derivation} verification={null} />
+        <PropertySheet source={source} derivation={live.derivation} verification={null} />
       </>
     );
   }

@@ -1,5 +1,4 @@
 /** One property: symbol, name and unit; formula; contributions; derivation; seal and notes beside. */
-import { useState } from 'react';
 import type {
   Derivation,
   DerivedProperty,
@@ -11,12 +10,11 @@ import {
   Formula,
   Note,
   ScrollingFormula,
-  Seal,
-  SealMark,
-  TextButton,
-  say,
+  writtenUnit,
 } from '../../components/index.ts';
 import { Contributions } from './Contributions.tsx';
+import { CopyButton } from './CopyButton.tsx';
+import { OpeningSeal } from './OpeningSeal.tsx';
 import { valueAt, writtenValue, type StatePoint } from './statePoint.ts';
 
 interface PropertyEntryProps {
@@ -37,14 +35,19 @@ export function PropertyEntry({
   const shown = shownForm(property, form);
   const value = valueAt(property.tree, derivation, state);
   return (
-    <section className="property" id={`property-${property.symbol}`} aria-label={property.name}>
+    <section
+      className="property"
+      id={`property-${property.symbol}`}
+      aria-label={property.name}
+      tabIndex={-1}
+    >
       <div className="property-sheet">
         <div className="flex items-baseline gap-12">
           <span className="text-ink min-w-34">
             <Formula tex={property.symbolTex} text={property.symbol} />
           </span>
           <h2 className="text-body">{property.name}</h2>
-          <span className="text-label text-ink-3 ml-auto font-mono">{shown.unit}</span>
+          <span className="text-label text-ink-3 ml-auto font-mono">{writtenUnit(shown.unit)}</span>
         </div>
         <DisplayFormula
           className="property-formula"
@@ -56,7 +59,7 @@ export function PropertyEntry({
           <span>
             {value === undefined
               ? 'no value at this state'
-              : `${writtenValue(value)} ${property.unit === '1' ? '' : property.unit}`}
+              : `${writtenValue(value)} ${property.unit === '1' ? '' : writtenUnit(property.unit)}`}
           </span>
           <span className="ml-auto flex gap-8">
             <CopyButton
@@ -81,10 +84,11 @@ export function PropertyEntry({
             <summary className="text-label text-ultramarine font-mono">
               Derivation, {property.steps.length} {property.steps.length === 1 ? 'step' : 'steps'}
             </summary>
-            <ol className="mt-10 list-decimal pl-28">
+            <ol className="mt-10">
               {property.steps.map((step, index) => (
-                <li key={index} className="text-ink-3 py-6">
-                  <span className="derivation-rule text-label font-mono">{step.rule}</span>
+                <li key={index} className="derivation-step text-ink-3 py-6">
+                  <span aria-hidden="true">{index + 1}.</span>
+                  <span className="text-label font-mono">{step.rule}</span>
                   <ScrollingFormula
                     className="text-ink"
                     tex={step.tex}
@@ -97,7 +101,7 @@ export function PropertyEntry({
         )}
       </div>
       <aside className="property-margin text-note text-ink-2" aria-label={`On ${property.name}`}>
-        {verification && <OpeningSeal verification={verification} />}
+        {verification && <OpeningSeal {...verification} />}
         {property.notes.map((note) => (
           <Note key={note.text + note.tex} tone={note.kind === 'diverges' ? 'ochre' : 'plain'}>
             <b className={note.kind === 'diverges' ? 'text-ochre' : 'text-ink'}>
@@ -127,59 +131,4 @@ interface ShownForm {
 /** The form asked for; the molecular one where a property has no other. */
 export function shownForm(property: DerivedProperty, form: FormName): ShownForm {
   return property.forms.find((one) => one.form === form) ?? property;
-}
-
-/** The seal, which opens what was tried. */
-function OpeningSeal({ verification }: { readonly verification: PropertyVerification }) {
-  const [isOpen, setIsOpen] = useState(false);
-  const { checks, status } = verification;
-  const passed = checks.filter((check) => check.status === 'passed').length;
-  return (
-    <div>
-      <Seal
-        status={status}
-        passed={passed}
-        total={checks.length}
-        isOpen={isOpen}
-        onOpen={() => setIsOpen(!isOpen)}
-      />
-      {isOpen && (
-        <ul className="mt-8">
-          {checks.map((check) => (
-            <li key={check.kind + check.title} className="py-4">
-              <span className="flex items-baseline gap-8">
-                <SealMark status={check.status} />
-                <span className="text-ink">{check.title}</span>
-              </span>
-              <span className="block">{check.detail}</span>
-            </li>
-          ))}
-        </ul>
-      )}
-    </div>
-  );
-}
-
-export function CopyButton({
-  what,
-  label,
-  children,
-}: {
-  readonly what: string;
-  readonly label: string;
-  readonly children: string;
-}) {
-  return (
-    <TextButton
-      aria-label={label}
-      onClick={() => {
-        navigator.clipboard.writeText(what).then(
-          () => say('Copied.'),
-          () => say('The browser does not let us copy; select the formula instead.'),
-        );
-      }}
-    >
-      {children}
-    </TextButton>
-  );
 }

@@ -3,23 +3,40 @@ import { useDeferredValue, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import {
   FORMS,
+  type CheckStatus,
   type Derivation,
   type FormName,
   type Verification,
 } from '../../../shared/contracts/derivation.ts';
-import { Empty, Formula, Segmented, SmallHeading, Tools } from '../../components/index.ts';
-import { CopyButton, PropertyEntry, shownForm } from './PropertyEntry.tsx';
+import {
+  DisplayFormula,
+  Empty,
+  Formula,
+  QuietButton,
+  ScrollingFormula,
+  Segmented,
+  SmallHeading,
+  Tools,
+} from '../../components/index.ts';
+import { AbsentProperties } from './AbsentProperties.tsx';
+import { CopyButton } from './CopyButton.tsx';
+import { DerivativeDialog } from './DerivativeDialog.tsx';
+import { OpeningSeal } from './OpeningSeal.tsx';
+import { PropertyEntry, shownForm } from './PropertyEntry.tsx';
 import { readStatePoint, writeStatePoint } from './statePoint.ts';
 import { StateTable } from './StateTable.tsx';
 
 interface PropertySheetProps {
+  /** The formulation from which it follows. */
+  readonly source: string;
   readonly derivation: Derivation;
   readonly verification: Verification | null;
 }
 
-export function PropertySheet({ derivation, verification }: PropertySheetProps) {
+export function PropertySheet({ source, derivation, verification }: PropertySheetProps) {
   const [parameters, setParameters] = useSearchParams();
   const [sought, setSought] = useState('');
+  const [isAsking, setIsAsking] = useState(false);
   const wanted = useDeferredValue(sought.trim().toLowerCase());
   const forms = FORMS.filter(
     (form) =>
@@ -60,17 +77,9 @@ export function PropertySheet({ derivation, verification }: PropertySheetProps) 
             onChange={(value) => set('form', value)}
           />
         )}
-        <span className="text-ink-2 inline-flex flex-wrap items-baseline gap-x-8">
+        <span className="text-ink-2 inline-flex min-w-0 flex-wrap items-baseline gap-x-8">
           valid for
-          {derivation.domain.map(({ tex, text }) => (
-            <Formula key={text} tex={tex} text={text} />
-          ))}
-          <Formula
-            tex={derivation.variables
-              .filter(({ role }) => ['temperature', 'extent', 'number', 'pressure'].includes(role))
-              .map(({ tex }) => `${tex} > 0`)
-              .join(',\\ ')}
-          />
+          <ScrollingFormula tex={domainTex(derivation)} label="domain" />
         </span>
         <span className="flex-1" />
         <input
@@ -81,7 +90,15 @@ export function PropertySheet({ derivation, verification }: PropertySheetProps) 
           onChange={(event) => setSought(event.target.value)}
           className="border-ink-3 text-ink min-h-28 w-[160px] border-b bg-transparent"
         />
+        <QuietButton onClick={() => setIsAsking(true)}>
+          Any derivative{' '}
+          <Formula
+            tex="\left(\frac{\partial X}{\partial Y}\right)_{Z}"
+            text="of X by Y at constant Z"
+          />
+        </QuietButton>
         <CopyButton
+          isQuiet
           what={`\\begin{aligned}\n${allTex}\n\\end{aligned}`}
           label="Copy all properties as TeX"
         >
@@ -96,17 +113,13 @@ export function PropertySheet({ derivation, verification }: PropertySheetProps) 
               text="ln of the partition function"
             />
           </SmallHeading>
-          <div
-            className="property-formula text-formula overflow-x-auto"
-            tabIndex={0}
-            role="region"
-            aria-label="ln of the partition function"
-          >
-            <Formula
-              tex={derivation.lnPartitionFunction.tex}
-              text={derivation.lnPartitionFunction.text}
-            />
-          </div>
+          <DisplayFormula
+            className="property-formula"
+            tex={derivation.lnPartitionFunction.tex}
+            text={derivation.lnPartitionFunction.text}
+            label="ln of the partition function"
+          />
+          <JumpList properties={shown} />
         </div>
         <aside className="property-margin" aria-label="State of the numbers">
           <StateTable
@@ -114,6 +127,12 @@ export function PropertySheet({ derivation, verification }: PropertySheetProps) 
             state={state}
             onChange={(next) => set('at', writeStatePoint(next))}
           />
+          {verification && verification.general.length > 0 && (
+            <div className="text-note text-ink-2 mt-22">
+              <SmallHeading>The model as a whole</SmallHeading>
+              <OpeningSeal status={worst(verification.general)} checks={verification.general} />
+            </div>
+          )}
         </aside>
       </div>
       {shown.map((property) => (
@@ -127,11 +146,53 @@ export function PropertySheet({ derivation, verification }: PropertySheetProps) 
         />
       ))}
       {shown.length === 0 && <Empty>No property of this model is called “{sought}”.</Empty>}
+      {wanted === '' && <AbsentProperties absent={derivation.absent ?? []} />}
+      {isAsking && (
+        <DerivativeDialog {...{ source, derivation, state }} onClose={() => setIsAsking(false)} />
+      )}
       <p className="text-note text-ink-3 max-w-text mt-22">
         Formulas and checks say what follows from the formulation, not whether the formulation
         describes a substance. For the design of equipment the design codes and the licensed
         practice that apply where it is used go before any model.
       </p>
     </>
+  );
+}
+
+/** `V > N b, T > 0, N > 0`: what the formulation demands, then what the variables are. */
+function domainTex({ domain, variables }: Derivation): string {
+  const positive = ['extent', 'temperature', 'number', 'pressure'];
+  const signs = variables
+    .filter(({ role }) => positive.includes(role))
+    .sort((a, b) => positive.indexOf(a.role) - positive.indexOf(b.role))
+    .map(({ tex }) => `${tex} > 0`);
+  const stated = domain.map(({ tex }) => tex);
+  return [...stated, ...signs.filter((tex) => !stated.includes(tex))].join(',\\; ');
+}
+
+function worst(checks: Verification['general']): CheckStatus {
+  const has = (status: CheckStatus): boolean => checks.some((check) => check.status === status);
+  return has('failed') ? 'failed' : has('undecided') ? 'undecided' : 'passed';
+}
+
+/** The symbols in a line, each leading to its place on the sheet. */
+function JumpList({ properties }: { readonly properties: Derivation['properties'] }) {
+  return (
+    <nav
+      aria-label="Properties on this sheet"
+      className="border-rule mt-8 flex flex-wrap gap-x-14 border-t border-dotted pt-8"
+    >
+      {properties.map(({ symbol, symbolTex, name }) => (
+        <a
+          key={symbol}
+          href={`#property-${symbol}`}
+          title={name}
+          aria-label={name}
+          className="inline-flex min-h-28 items-center no-underline hover:underline"
+        >
+          <Formula tex={symbolTex} text={symbol} />
+        </a>
+      ))}
+    </nav>
   );
 }
