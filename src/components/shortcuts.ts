@@ -25,7 +25,10 @@ function isTyping(event: KeyboardEvent): boolean {
   const target = event.target;
   return (
     target instanceof HTMLElement &&
-    (target.isContentEditable || /^(INPUT|TEXTAREA|SELECT)$/.test(target.tagName))
+    (target.isContentEditable ||
+      /^(INPUT|TEXTAREA|SELECT)$/.test(target.tagName) ||
+      // The editor takes its keys by an element of its own, which is none of these.
+      target.closest('[role="textbox"], .monaco-editor') !== null)
   );
 }
 
