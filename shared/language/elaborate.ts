@@ -110,10 +110,11 @@ class Elaboration {
         diluteState(known),
         orderParameters.map(({ symbol }) => symbol),
       ),
-      nameOrder: nameOrder(this.trees(), [
-        ...quantities.map(({ name }) => name),
-        ...orderParameters.map(({ name }) => name),
-      ]),
+      nameOrder: nameOrder(
+        this.trees(),
+        [...quantities.map(({ name }) => name), ...orderParameters.map(({ name }) => name)],
+        abbreviations.map(({ name }) => name),
+      ),
       normalizedSource,
     };
     return { formulation, scope };

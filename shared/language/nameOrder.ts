@@ -3,7 +3,8 @@
  *
  * Neighbours in a product, `a N` or `k T`, each give an arrow from the first to the second; the
  * names are sorted along the arrows, a later arrow that would close a circle being left out. Where
- * the arrows leave a choice, pi comes first, then what the author declared, then N, k, T, V.
+ * the arrows leave a choice, pi comes first, then what the author declared, then N, k, T, V, and
+ * abbreviations last: N Λ³.
  */
 import { isBuiltInFunction } from './parseExpression.ts';
 import { visitNames, partsOf } from './walkTree.ts';
@@ -38,8 +39,15 @@ const MOST_PAIRS = 1000;
 
 const LAST = ['N', 'k', 'T', 'V'];
 
-/** The order for printing; `trees` in the order of the text, `declared` the names of the author. */
-export function nameOrder(trees: readonly ExpressionTree[], declared: readonly string[]): string[] {
+/**
+ * The order for printing; `trees` in the order of the text, `declared` the numbers of the author,
+ * `abbreviations` the names of his lets.
+ */
+export function nameOrder(
+  trees: readonly ExpressionTree[],
+  declared: readonly string[],
+  abbreviations: readonly string[] = [],
+): string[] {
   const pairs: [string, string][] = [];
   const met = new Set<string>();
   for (const tree of trees) {
@@ -51,9 +59,12 @@ export function nameOrder(trees: readonly ExpressionTree[], declared: readonly s
   const all = [
     'pi',
     ...declared,
-    ...[...met].filter((n) => !LAST.includes(n) && !/^(N|mu)_/.test(n)),
+    ...[...met].filter(
+      (n) => !LAST.includes(n) && !abbreviations.includes(n) && !/^(N|mu)_/.test(n),
+    ),
     ...[...met].filter((n) => /^(N|mu)_/.test(n)),
     ...LAST,
+    ...abbreviations,
   ];
   const names = [...new Set(all)];
   const behind = new Map<string, Set<string>>(names.map((name) => [name, new Set()]));
