@@ -41,6 +41,8 @@ const OPTIONS: Monaco.editor.IStandaloneEditorConstructionOptions = {
   fixedOverflowWidgets: true,
   unicodeHighlight: { ambiguousCharacters: false, invisibleCharacters: true },
   suggest: { showIcons: false, showStatusBar: false },
+  // Enter ends a line, whatever is suggested; Tab takes a suggestion.
+  acceptSuggestionOnEnter: 'off',
   hover: { delay: 250 },
   ariaLabel: 'Formulation. Press Control M to let Tab move on.',
   accessibilitySupport: 'auto',
