@@ -39,7 +39,10 @@ const OPTIONS: Monaco.editor.IStandaloneEditorConstructionOptions = {
   contextmenu: false,
   tabSize: 2,
   fixedOverflowWidgets: true,
-  unicodeHighlight: { ambiguousCharacters: false, invisibleCharacters: true },
+  // The language itself knows its names and refuses characters that it does not know.
+  unicodeHighlight: { ambiguousCharacters: false, invisibleCharacters: false },
+  wordBasedSuggestions: 'off',
+  links: false,
   suggest: { showIcons: false, showStatusBar: false },
   // Enter ends a line, whatever is suggested; Tab takes a suggestion.
   acceptSuggestionOnEnter: 'off',

@@ -1,5 +1,6 @@
 /** The formulation language as the editor knows it: colours, brackets, completion, hover. */
 import type * as Monaco from 'monaco-editor/editor/editor.api';
+import { asciiName } from '../../../shared/language/greek.ts';
 import { completionsAt, hoverAt, tokensOf, type Span } from '../../../shared/language/index.ts';
 
 export const LANGUAGE = 'massieu';
@@ -44,6 +45,14 @@ export function registerLanguage(monaco: typeof Monaco): void {
       };
     },
   });
+  monaco.languages.registerDocumentHighlightProvider(LANGUAGE, {
+    provideDocumentHighlights(model, position) {
+      const source = model.getValue();
+      return placesOf(source, model.getOffsetAt(position)).map((span) => ({
+        range: rangeOf(model, span),
+      }));
+    },
+  });
   monaco.languages.registerHoverProvider(LANGUAGE, {
     provideHover(model, position) {
       const found = hoverAt(model.getValue(), model.getOffsetAt(position));
@@ -77,6 +86,16 @@ const tokensProvider: Monaco.languages.TokensProvider = {
     return { tokens, endState: NO_STATE };
   },
 };
+
+/** Where the name at an offset stands in the source, whichever way its Greek is typed. */
+export function placesOf(source: string, offset: number): Span[] {
+  const names = tokensOf(source).filter(({ kind }) => kind === 'name');
+  const spelling = ({ start, end }: Span): string => asciiName(source.slice(start, end));
+  const here = names.find(({ span }) => span.start <= offset && offset <= span.end);
+  if (!here) return [];
+  const wanted = spelling(here.span);
+  return names.map(({ span }) => span).filter((span) => spelling(span) === wanted);
+}
 
 const COLOURED: ReadonlySet<string> = new Set(['keyword', 'unit', 'text', 'comment']);
 

@@ -18,7 +18,8 @@ export async function signIn(page: Page, name: string): Promise<void> {
 export async function openModel(page: Page, title: string): Promise<string> {
   await page.goto('/desk');
   await page.getByRole('link', { name: 'Working fluid K-7' }).first().click();
-  await page.getByRole('main').getByRole('link', { name: title, exact: true }).click();
+  await page.waitForURL('**/notebooks/*');
+  await page.getByRole('table').getByRole('link', { name: title, exact: true }).click();
   await consequences(page).waitFor();
   return new URL(page.url()).pathname;
 }
