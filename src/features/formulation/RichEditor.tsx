@@ -36,6 +36,7 @@ const OPTIONS: Monaco.editor.IStandaloneEditorConstructionOptions = {
   occurrencesHighlight: 'singleFile',
   selectionHighlight: false,
   renderWhitespace: 'none',
+  renderFinalNewline: 'on',
   contextmenu: false,
   tabSize: 2,
   fixedOverflowWidgets: true,

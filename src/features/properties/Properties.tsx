@@ -43,7 +43,7 @@ function VersionChoice({ number }: { readonly number: number }) {
   const [parameters, setParameters] = useSearchParams();
   if (!versions || versions.length === 0) return null;
   return (
-    <label className="text-label text-ink-3 mb-14 flex items-baseline gap-10 font-mono">
+    <label className="text-label text-ink-3 mb-14 flex min-w-0 flex-wrap items-baseline gap-10 font-mono">
       properties of
       <select
         value={number === 0 ? 'draft' : number}
@@ -51,7 +51,7 @@ function VersionChoice({ number }: { readonly number: number }) {
           parameters.set('version', event.target.value);
           setParameters(parameters);
         }}
-        className="border-rule bg-sheet text-ink min-h-28 rounded border px-8"
+        className="border-ink-3 bg-sheet text-ink min-h-28 max-w-full rounded border px-8"
       >
         {versions.map((version) => (
           <option key={version.number} value={version.number}>
