@@ -97,8 +97,12 @@ function BoxedFormula({
     const observer =
       typeof ResizeObserver === 'undefined' ? undefined : new ResizeObserver(measure);
     observer?.observe(element);
+    // A face that comes later changes the width of the formula, and not of its box.
+    const fonts = document.fonts as FontFaceSet | undefined;
+    fonts?.addEventListener('loadingdone', measure);
     return () => {
       element.removeEventListener('scroll', measure);
+      fonts?.removeEventListener('loadingdone', measure);
       observer?.disconnect();
     };
   }, [markup]);

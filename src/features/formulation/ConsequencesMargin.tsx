@@ -37,7 +37,7 @@ export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) 
       {source === undefined && <p role="status">Deriving for the first time</p>}
       <dl
         data-stale={isStale || undefined}
-        className={classes(isStale && '[&_*]:!text-ink opacity-[0.62]')}
+        className={classes(isStale && '[&_*]:!text-ink opacity-[0.66]')}
       >
         {shown.map((property) => (
           <div
@@ -77,7 +77,7 @@ export function ConsequencesMargin({ live }: { readonly live: LiveDerivation }) 
       {derivation && derivation.claims.length > 0 && (
         <>
           <h3 className="text-note text-ink mt-22 font-[560]">Claims</h3>
-          <ul className={classes(isStale && '[&_*]:!text-ink opacity-[0.62]')}>
+          <ul className={classes(isStale && '[&_*]:!text-ink opacity-[0.66]')}>
             {derivation.claims.map((claim) => (
               <li key={claim.line} className="flex flex-wrap items-baseline gap-x-8 py-2">
                 <SealMark status={claim.status} />

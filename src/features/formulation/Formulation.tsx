@@ -82,6 +82,7 @@ function Desk({ draft }: { readonly draft: Draft }) {
                 Tidy
               </QuietButton>
               <ActButton
+                className="desk:w-auto w-full text-center"
                 disabled={text.trim() === ''}
                 onClick={() => {
                   if (isFaulty)

@@ -31,8 +31,6 @@ const OPTIONS: Monaco.editor.IStandaloneEditorConstructionOptions = {
   padding: { top: 4, bottom: 8 },
   scrollbar: { vertical: 'hidden', horizontal: 'auto', alwaysConsumeMouseWheel: false },
   guides: { indentation: false },
-  // A colour means something; matching brackets are shown where the cursor is.
-  bracketPairColorization: { enabled: false },
   occurrencesHighlight: 'singleFile',
   selectionHighlight: false,
   renderWhitespace: 'none',

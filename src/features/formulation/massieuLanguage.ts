@@ -19,6 +19,8 @@ export function registerLanguage(monaco: typeof Monaco): void {
       ['[', ']'],
       ['{', '}'],
     ],
+    // A colour means something; brackets that match are shown where the cursor is.
+    colorizedBracketPairs: [],
     autoClosingPairs: [
       { open: '(', close: ')' },
       { open: '[', close: ']' },

@@ -30,7 +30,7 @@ export function DerivativeDialog({ source, derivation, state, onClose }: Derivat
   const value = answer?.kind === 'found' ? valueAt(answer.tree, derivation, state) : undefined;
   return (
     <Dialog title="Any derivative" onClose={onClose}>
-      <div className="text-label text-ink-2 flex flex-wrap items-end gap-14 font-mono">
+      <div className="text-label text-ink-2 grid grid-cols-2 items-end gap-14 font-mono">
         <Choose
           label="derivative of"
           {...{ choices }}
@@ -134,7 +134,7 @@ function Choose({
       <select
         value={value}
         onChange={(event) => onChange(event.target.value)}
-        className="border-ink-3 bg-sheet text-ink mt-4 min-h-32 max-w-[180px] rounded border px-8"
+        className="border-ink-3 bg-sheet text-ink mt-4 min-h-32 w-full rounded border px-8"
       >
         {choices.map(({ name, title }) => (
           <option key={name} value={name}>
@@ -171,7 +171,10 @@ function choicesOf(derivation: Derivation): Choice[] {
 function firstQuestion(derivation: Derivation, choices: readonly Choice[]) {
   const naturals = naturalsOf(derivation);
   const by = naturals.find(({ role }) => role === 'temperature') ?? naturals[0];
-  const held = naturals.filter((one) => one !== by).map(({ name }) => name);
+  const held = naturals
+    .filter((one) => one !== by)
+    .sort((a, b) => Number(a.role === 'number') - Number(b.role === 'number'))
+    .map(({ name }) => name);
   const isOffered = (name: string): boolean => choices.some((one) => one.name === name);
   const of = ['p', 'S', 'U'].find((name) => isOffered(name) && !held.includes(name));
   return { of: of ?? choices[0]?.name ?? '', by: by?.name ?? '', held };

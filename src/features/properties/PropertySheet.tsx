@@ -162,12 +162,14 @@ export function PropertySheet({ source, derivation, verification }: PropertyShee
 /** `V > N b, T > 0, N > 0`: what the formulation demands, then what the variables are. */
 function domainTex({ domain, variables }: Derivation): string {
   const positive = ['extent', 'temperature', 'number', 'pressure'];
+  const stated = domain.map(({ tex }) => tex);
+  // V > N b says more than V > 0.
+  const isBounded = (tex: string): boolean => stated.some((one) => one.startsWith(`${tex} >`));
   const signs = variables
-    .filter(({ role }) => positive.includes(role))
+    .filter(({ role, tex }) => positive.includes(role) && !isBounded(tex))
     .sort((a, b) => positive.indexOf(a.role) - positive.indexOf(b.role))
     .map(({ tex }) => `${tex} > 0`);
-  const stated = domain.map(({ tex }) => tex);
-  return [...stated, ...signs.filter((tex) => !stated.includes(tex))].join(',\\; ');
+  return [...stated, ...signs].join(',\\; ');
 }
 
 function worst(checks: Verification['general']): CheckStatus {

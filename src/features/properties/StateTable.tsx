@@ -1,7 +1,7 @@
 /** The state at which the sheet shows numbers, each variable with its unit. */
 import { useState } from 'react';
 import type { Derivation } from '../../../shared/contracts/derivation.ts';
-import { Formula, SmallHeading } from '../../components/index.ts';
+import { Formula, SmallHeading, writtenUnit } from '../../components/index.ts';
 import type { StatePoint } from './statePoint.ts';
 
 interface StateTableProps {
@@ -28,7 +28,9 @@ export function StateTable({ variables, state, onChange }: StateTableProps) {
                   onChange={(value) => onChange({ ...state, [variable.name]: value })}
                 />
               </td>
-              <td className="text-ink-3 py-4 pl-10">{variable.unit}</td>
+              <td className="text-ink-3 py-4 pl-10">
+                {variable.unit === '1' ? '' : writtenUnit(variable.unit)}
+              </td>
             </tr>
           ))}
         </tbody>
@@ -58,7 +60,7 @@ function ValueField({
       aria-label={label}
       aria-invalid={!isNumber}
       inputMode="decimal"
-      value={typed ?? String(value)}
+      value={typed ?? String(value).replace('e+', 'e')}
       onChange={(event) => setTyped(event.target.value)}
       onBlur={take}
       onKeyDown={(event) => {
