@@ -83,11 +83,14 @@ function BoxedFormula({
   const markup = useTypeset()?.(tex, isDisplay);
   const box = useRef<HTMLDivElement>(null);
   const [hidden, setHidden] = useState<Hidden>();
+  const [isScrolling, setIsScrolling] = useState(false);
 
   useEffect(() => {
     const element = box.current;
     if (!element) return;
     const measure = () => {
+      setIsScrolling(element.scrollWidth > element.clientWidth);
+      // A pixel too wide is nothing to fade.
       const left = element.scrollLeft > 1;
       const right = element.scrollLeft + element.clientWidth < element.scrollWidth - 1;
       setHidden(left && right ? 'both' : left ? 'left' : right ? 'right' : undefined);
@@ -113,7 +116,7 @@ function BoxedFormula({
       data-more={hidden}
       className={classes('formula-scroll', isDisplay && 'text-formula', className)}
       // A box that scrolls must be reachable by keyboard.
-      {...(hidden ? { tabIndex: 0, role: 'region', 'aria-label': label ?? 'formula' } : {})}
+      {...(isScrolling ? { tabIndex: 0, role: 'region', 'aria-label': label ?? 'formula' } : {})}
     >
       {markup ? (
         <div dangerouslySetInnerHTML={{ __html: markup }} />
