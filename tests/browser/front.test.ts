@@ -59,19 +59,24 @@ describe('the specimen of the front door', () => {
     expect(isRefused).toBe(true);
   });
 
-  it('needs less than 200 kB of compressed script', async () => {
+  it('is drawn by less than 200 kB of compressed script', async () => {
     browser = await openBrowser(site.url);
     const page = await browser.context.newPage();
     await page.goto('/');
     await page.locator('annotation').first().waitFor({ state: 'attached' });
-    const bytes = await page.evaluate(() =>
+    const scripts = await page.evaluate(() =>
       performance
         .getEntriesByType('resource')
-        .filter((entry) => (entry as PerformanceResourceTiming).initiatorType !== 'other')
-        .filter((entry) => entry.name.endsWith('.js'))
-        .reduce((sum, entry) => sum + (entry as PerformanceResourceTiming).encodedBodySize, 0),
+        .filter(({ name }) => new URL(name).pathname.endsWith('.js'))
+        .map((entry) => ({
+          name: entry.name.split('/').at(-1) ?? '',
+          bytes: (entry as PerformanceResourceTiming).encodedBodySize,
+        })),
     );
-    expect(bytes).toBeGreaterThan(10_000);
-    expect(bytes).toBeLessThan(260_000);
+    // What comes behind the drawn page: typesetting, the plot with its evaluation, the workers.
+    const isLater = /^(typeset|Isotherms|compile|json|[\w.]*worker)-/;
+    const first = scripts.filter(({ name }) => !isLater.test(name));
+    expect(first.length).toBeGreaterThan(3);
+    expect(first.reduce((sum, { bytes }) => sum + bytes, 0)).toBeLessThan(200_000);
   });
 });
